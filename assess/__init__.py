@@ -1,0 +1,1 @@
+"""Members: from what was read to a finding; knows nothing of screens."""

@@ -1,0 +1,1 @@
+"""The proof: published tables, outside references, properties, and the interface through its own keys."""

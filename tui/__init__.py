@@ -1,0 +1,1 @@
+"""Shows and asks: the command line and the terminal interface."""
