@@ -65,14 +65,16 @@ def _nominal(nominal: str, dressing: str) -> tuple[int, int]:
     known = sorted(_lumber(dressing)[0]) if thickness <= 4 else list(TIMBERS)
     thicknesses = (2, 3, 4) if thickness <= 4 else TIMBERS
     if thickness not in thicknesses or width not in known:
-        near = sorted(known, key=lambda n: (abs(n - width), n))[:2] if thickness in thicknesses else []
+        by_distance = sorted(known, key=lambda n: (abs(n - width), n)) if thickness in thicknesses else []
+        near = tuple(f"{thickness}x{n}" for n in sorted(by_distance[:2]))
+        nearest = f"; nearest: {' or '.join(near)}" if near else ""
         widths = ", ".join(map(str, sorted(_lumber(dressing)[0])))
         raise WoodError(
             "nominal",
             nominal,
             f"2, 3 or 4 in thick by {widths} in wide, or a timber from 5x5, in even sizes over 6, to 24x24; "
-            "else the measured size",
-            tuple(f"{thickness}x{n}" for n in sorted(near)),
+            f"else the measured size{nearest}",
+            near,
             f"is no nominal size with a {dressing} dressed size on file",
         )
     return thickness, width

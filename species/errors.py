@@ -8,12 +8,12 @@ class WoodError(ValueError):
 
     field        'species', 'grade', 'size', 'rules', 'nominal' or 'dressing'
     value        what was asked for, as typed
-    accepted     what would be accepted, in words
-    suggestions  nearest names that exist, nearest first; empty where none is near
+    accepted     what would be accepted, in words, the nearest names among them
+    suggestions  the same names for programs, nearest first; empty where none is near
     problem      what is wrong with the value, as the end of a clause
 
-    >>> str(WoodError("grade", "No. 9", "a grade with published values", ("No. 2",)))
-    "grade: 'No. 9' is not known; accepted: a grade with published values; nearest: No. 2"
+    >>> str(WoodError("grade", "No. 9", "a grade with published values, nearest: No. 2", ("No. 2",)))
+    "grade: 'No. 9' is not known; accepted: a grade with published values, nearest: No. 2"
     """
 
     def __init__(
@@ -36,5 +36,4 @@ class WoodError(ValueError):
         text = ascii(self.value[:60]) if isinstance(self.value, str) else ascii(self.value)
         if len(text) > 60:
             text = text[:57] + "..."
-        nearest = f"; nearest: {' or '.join(self.suggestions)}" if self.suggestions else ""
-        return f"{self.field}: {text} {self.problem}; accepted: {self.accepted}{nearest}"
+        return f"{self.field}: {text} {self.problem}; accepted: {self.accepted}"

@@ -114,10 +114,12 @@ def _match(field: str, text: str) -> Meaning:
     what = "a species group" if field == "species" else "a grade"
     some = "Douglas Fir-Larch, Hem-Fir, Southern Pine" if field == "species" else "Select Structural, No. 2, Stud"
     if found is None:
-        accepted = f"{what} with published values, e.g. {some}"
-        raise WoodError(field, text, accepted, nearest_names(field, text))
+        near = nearest_names(field, text)
+        names = f"nearest: {' or '.join(near)}" if near else f"e.g. {some}"
+        raise WoodError(field, text, f"{what} with published values, {names}", near)
     if not found.certain:
-        raise WoodError(field, text, f"{what} by its full name", found.names, "may be more than one group")
+        groups = f"{what} by its full name: {' or '.join(found.names)}"
+        raise WoodError(field, text, groups, found.names, "may be more than one group")
     return found
 
 
