@@ -105,9 +105,11 @@ def _strips(low: Array, high: Array, at: tuple[NDArray[np.intp], ...], holes: Se
         centre, radius = height[at[0], 0], 0.5 * diameter[at[0], 0]
         starts[number] = np.where(present[at], centre - radius, low)
         ends[number] = np.where(present[at], centre + radius, low)
-    starts, ends = np.clip(starts, low, high), np.clip(ends, low, high)
-    order = np.argsort(starts, axis=0, kind="stable")
-    starts, ends = np.take_along_axis(starts, order, axis=0), np.take_along_axis(ends, order, axis=0)
+    for edges in (starts, ends):
+        np.minimum(np.maximum(edges, low, out=edges), high, out=edges)
+    if len(holes) > 1:
+        order = np.argsort(starts, axis=0, kind="stable")
+        starts, ends = np.take_along_axis(starts, order, axis=0), np.take_along_axis(ends, order, axis=0)
     floor = np.maximum.accumulate(np.concatenate([low[None], ends]), axis=0)
     left = np.concatenate([starts, high[None]]) - floor
     left[left < SLIVER] = 0.0

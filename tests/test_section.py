@@ -119,6 +119,13 @@ def test_sliver_beside_a_hole_is_never_less_than_nothing() -> None:
             assert left["S_bot"] <= 1.5 * (1.01 * thin + 1e-12) ** 2 / 6
 
 
+def test_holes_side_by_side_leave_nothing_between() -> None:
+    """A row of holes from edge to edge, each touching the next but for rounding, cuts the part through."""
+    for count in range(2, 13):
+        row = tuple((9.3 / count, (i + 0.5) * 9.3 / count) for i in range(count))
+        assert one(1.5, 9.3, holes=row) == dict.fromkeys(NAMES, 0.0)
+
+
 def test_circle() -> None:
     """A = pi D^2/4, S = pi D^3/32, I = pi D^4/64; a rectangle of its depth and b_net has its area."""
     log = circle(np.array([[8.0, 10.0, 0.0]]))
