@@ -177,7 +177,7 @@ def parts(draw: st.DrawFn) -> tuple[list[tuple[float, float]], list[list[tuple[f
     return sizes, holes, places
 
 
-@settings(derandomize=True, max_examples=250, deadline=None)
+@settings(derandomize=True, max_examples=150, deadline=None)
 @given(parts())
 def test_shapely(case: tuple) -> None:
     """Area, centroid, extreme fibres and second moment of the polygon left; sixteenths are exact in doubles."""

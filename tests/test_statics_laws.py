@@ -26,7 +26,7 @@ def members(draw: st.DrawFn) -> tuple[np.ndarray, np.ndarray, np.ndarray, np.nda
     return x[None], np.array(EI)[None], np.array(supports), np.array(w)[None], np.array(P)[None]
 
 
-laws = settings(derandomize=True, max_examples=80, deadline=None)
+laws = settings(derandomize=True, max_examples=50, deadline=None)
 Member = tuple[np.ndarray, np.ndarray, np.ndarray, np.ndarray, np.ndarray]
 
 
