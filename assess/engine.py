@@ -1,0 +1,125 @@
+"""The spine: a scenario goes through variants, mesh, section, statics, envelope and checks, once, over all rows."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from assess import adjust, checks, service
+from assess.checks import Checked
+from assess.effects import Effects, effects
+from assess.envelope import Envelope, envelope
+from assess.mesh import Mesh, mesh
+from assess.scenario import Scenario
+from assess.section import Section, circle, net_rectangle
+from assess.share import added, shares, taken
+from assess.trace import Array, Trace
+from assess.variants import PartRows, Rows, variants
+from assess.weight import density_pcf, own_weight_pli
+
+
+@dataclass(frozen=True)
+class Computed:
+    """Everything the checks found, over K rows; `judge` makes a finding of it."""
+
+    rows: Rows
+    mesh: Mesh
+    envelope: Envelope
+    strength: tuple[Checked, ...]
+    live_deflection: Checked
+    total_deflection: Checked
+    bounce: service.Bounce
+
+
+def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
+    """Assess every row of a scenario.
+
+    scenario   the member as floats
+    trace      where given, every step is noted in it
+    returns    Computed
+    """
+    rows = variants(scenario)
+    stations = mesh(scenario, rows)
+    part = rows.parts[0]
+    if trace is not None:
+        trace.scope = "section"
+    whole = gross(part, trace)
+    left = [net(scenario if index == 0 else None, piece, stations) for index, piece in enumerate(rows.parts)]
+    if trace is not None:
+        trace.scope = "weight and stiffness"
+    own = own_pli(scenario, rows, part, whole, trace)
+    f = adjust.factors(scenario, rows, part, trace)
+    E = [stiffness(part, f, trace)]
+    E += [stiffness(piece, adjust.factors(scenario, rows, piece)) for piece in rows.parts[1:]]
+    EI = [E[index][:, None] * section.I for index, section in enumerate(left)]
+    loads = on_part(0, scenario, rows, stations, EI, own)
+    env = envelope(scenario, rows, loads)
+    strength = [
+        *checks.bending(scenario, rows, env, stations, left[0], part, f, trace),
+        checks.shear(scenario, rows, env, stations, left[0], part, f, trace),
+        checks.bearing(scenario, rows, env, stations, part, f, trace),
+    ]
+    lift = checks.uplift(rows, env, stations, trace)
+    if lift is not None:
+        strength.append(lift)
+    live, total = service.deflection(scenario, rows, env, stations, trace)
+    dead_pli = rows.dead_psf * rows.tributary_in / 144.0 + own
+    bounce = service.bounce(rows, E[0], whole.I[:, 0], dead_pli, trace)
+    return Computed(rows, stations, env, tuple(strength), live, total, bounce)
+
+
+def on_part(index: int, scenario: Scenario, rows: Rows, stations: Mesh, EI: list[Array], own: Array) -> Effects:
+    """Effects on one part over all stages: in each, its EI share of what came while the parts stood so."""
+    found = []
+    for stage in scenario.stages:
+        together = sum((EI[i] for i in stage.parts[1:]), EI[stage.parts[0]])
+        came = effects(scenario, rows, stations, stage, together, own)
+        if len(stage.parts) > 1:
+            came = taken(came, shares([EI[i] for i in stage.parts])[stage.parts.index(index)])
+        found.append(came)
+    return added(found)
+
+
+def stiffness(part: PartRows, f: adjust.Factors, trace: Trace | None = None) -> Array:
+    """E' of a part [K] [psi]."""
+    E = adjust.E_prime.on(trace, part.wood("E")[:, None, None], f.CM_E, f.Ct_E, f.Ci_E, f.Cfu_E)
+    return E[:, 0, 0]
+
+
+def gross(part: PartRows, trace: Trace | None = None) -> Section:
+    """The whole section of a part [K, 1]."""
+    b, d = part.breadth_in[:, None], part.depth_in[:, None]
+    if trace is not None:
+        trace.value("b", b, "in", "readings", "diameter" if part.round else "breadth of all plies")
+        trace.value("d", d, "in", "readings", "depth in the direction of load")
+    return circle(d) if part.round else net_rectangle(b, d, np.zeros_like(b), np.zeros_like(b), np.zeros_like(b), ())
+
+
+def net(scenario: Scenario | None, part: PartRows, stations: Mesh) -> Section:
+    """What is left of a part in each segment [K, N-1]; a loss counts where the segment lies inside it.
+
+    scenario   whose losses the part has; None for a part that has none
+    """
+    b, d = part.breadth_in[:, None], part.depth_in[:, None]
+    shape = stations.mid.shape
+    if part.round:
+        return circle(np.broadcast_to(d, shape))
+    top, bottom, side = np.zeros(shape), np.zeros(shape), np.zeros(shape)
+    holes = []
+    for loss in scenario.losses if scenario is not None else ():
+        inside = (stations.mid > loss.from_in) & (stations.mid < loss.to_in)
+        top = np.maximum(top, inside * loss.top_in)
+        bottom = np.maximum(bottom, inside * loss.bottom_in)
+        side = np.maximum(side, inside * loss.side_in)
+        if loss.diameter_in > 0.0:
+            holes.append((np.full_like(d, loss.diameter_in), np.full_like(d, loss.height_in), inside))
+    return net_rectangle(b, d, top, bottom, side, tuple(holes))
+
+
+def own_pli(scenario: Scenario, rows: Rows, part: PartRows, whole: Section, trace: Trace | None = None) -> Array:
+    """Own weight [K] [lb/in]; nothing where the dead load reading holds it already."""
+    if not scenario.own_weight:
+        return np.zeros(rows.count)
+    density = density_pcf.on(trace, part.wood("G"), rows.moisture_percent)
+    return own_weight_pli.on(trace, density, whole.A[:, 0]) / scenario.slope_cos

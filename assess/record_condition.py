@@ -1,0 +1,133 @@
+"""Defects as they were seen: a kind, a place, an extent and a size."""
+
+from __future__ import annotations
+
+from typing import Annotated, Any
+
+from pydantic import ValidationInfo
+
+from assess import quantities as q
+from assess.errors import ReadingError
+from assess.reading import Reading
+from assess.record_fields import Record, Typed, choice, inlined, measured, nested, text, whole, written, yes_no
+
+FACES = ("top", "bottom", "left", "right", "side", "all")
+
+
+class _Defect(Record):
+    defect: Annotated[str, text(40)]
+    new_work: Annotated[bool | None, yes_no()] = None
+    remarks: Annotated[str | None, text()] = None
+
+
+class Notch(_Defect):
+    """Wood cut out of an edge."""
+
+    edge: Annotated[str, choice("top", "bottom")]
+    at: Annotated[Reading, measured(q.POSITION)]
+    length: Annotated[Reading, measured(q.LENGTH)]
+    depth: Annotated[Reading, measured(q.SIZE)]
+
+
+class Hole(_Defect):
+    """A bore through the breadth; `at` and `height` are of its centre."""
+
+    at: Annotated[Reading, measured(q.POSITION)]
+    diameter: Annotated[Reading, measured(q.SIZE)]
+    height: Annotated[Reading, measured(q.HEIGHT)]
+
+
+class Decay(_Defect):
+    """Soft or eaten wood on a face, probed to a depth."""
+
+    face: Annotated[str, choice("top", "bottom", "side", "all")]
+    at: Annotated[Reading, measured(q.POSITION)]
+    length: Annotated[Reading, measured(q.LENGTH)]
+    depth: Annotated[Reading, measured(q.SIZE)]
+    margin: Annotated[Reading | None, measured(q.MARGIN)] = None
+
+
+class EndSplit(_Defect):
+    """A through split at an end; `remaining` is the depth that still carries."""
+
+    end: Annotated[str, choice("left", "right")]
+    remaining: Annotated[Reading, measured(q.SIZE)]
+    length: Annotated[Reading, measured(q.LENGTH)]
+
+
+class Checking(_Defect):
+    """Ordinary seasoning checks: recorded, no penalty and no bonus."""
+
+    at: Annotated[Reading | None, measured(q.POSITION)] = None
+    length: Annotated[Reading | None, measured(q.LENGTH)] = None
+    depth: Annotated[Reading | None, measured(q.SIZE)] = None
+
+
+class Char(_Defect):
+    """Charred faces, scraped to a depth."""
+
+    faces: Annotated[tuple[str, ...], Typed(lambda v, i: _faces(v, i), written, {"type": "array"})]
+    at: Annotated[Reading, measured(q.POSITION)]
+    length: Annotated[Reading, measured(q.LENGTH)]
+    depth: Annotated[Reading, measured(q.SIZE)]
+
+
+class Remaining(_Defect):
+    """A measured remaining section, used as given."""
+
+    at: Annotated[Reading, measured(q.POSITION)]
+    length: Annotated[Reading, measured(q.LENGTH)]
+    width: Annotated[Reading, measured(q.SIZE)]
+    depth: Annotated[Reading, measured(q.SIZE)]
+
+
+class HangerCorrosion(_Defect):
+    """A hanger whose bearing is not relied on."""
+
+    support: Annotated[int, whole(1, 6)]
+
+
+def _faces(value: Any, info: ValidationInfo) -> tuple[str, ...]:
+    if not isinstance(value, list | tuple) or not 1 <= len(value) <= 4:
+        raise ReadingError("", value, "a list of 1 to 4 faces of top, bottom, left, right, side, all")
+    face = choice(*FACES)
+    return tuple(face.read(item, info) for item in value)
+
+
+DEFECTS: dict[str, type[_Defect]] = {
+    "notch": Notch,
+    "hole": Hole,
+    "decay": Decay,
+    "insects": Decay,
+    "end split": EndSplit,
+    "check": Checking,
+    "char": Char,
+    "remaining": Remaining,
+    "hanger corrosion": HangerCorrosion,
+}
+
+Defect = _Defect
+
+
+def condition_field() -> Typed:
+    """A field that holds the list of defects."""
+    kind = choice(*DEFECTS)
+
+    def read(value: Any, info: ValidationInfo) -> tuple[Record, ...]:
+        if not isinstance(value, list | tuple):
+            raise ReadingError("", value, "a list of defects")
+        if len(value) > 100:
+            raise ReadingError("", f"{len(value)} defects", "at most 100 defects", "is too long")
+        found = []
+        for index, item in enumerate(value):
+            if not isinstance(item, dict):
+                raise ReadingError(str(index), item, "a defect: an object with `defect` and its fields")
+            try:
+                name = kind.read(item.get("defect"), info)
+            except ReadingError as error:
+                raise error.at(f"{index}.defect") from None
+            found.append(nested(DEFECTS[name], item | {"defect": name}, info, str(index)))
+        return tuple(found)
+
+    models = list(dict.fromkeys(DEFECTS.values()))
+    return Typed(read, written, {"type": "array", "items": {"anyOf": [inlined(m) for m in models]}, "maxItems": 100})

@@ -1,0 +1,1 @@
+"""One module for each subcommand: `parser()` and `run(arguments) -> exit status`."""
