@@ -5,7 +5,8 @@ from __future__ import annotations
 from assess.errors import ReadingError
 from assess.kinds import KINDS, Kind
 from assess.reading import Reading
-from assess.record import Member, Size
+from assess.record import Member
+from assess.record_parts import Size
 from assess.resolve_loads import resolve_loads
 from assess.resolve_wood import resolve_wood
 from assess.scenario import Edge, Part, Scenario, Stage

@@ -7,7 +7,8 @@ from math import cos, radians
 
 from assess.errors import ReadingError
 from assess.materials import layer_psf
-from assess.record import Member, TypedUse
+from assess.record import Member
+from assess.record_parts import TypedUse
 from assess.scenario import LineLoad, PointLoad, UseLoad
 from assess.uses import use_named
 

@@ -5,7 +5,8 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from assess.errors import ReadingError
-from assess.record import Member, Wood
+from assess.record import Member
+from assess.record_parts import Wood
 from assess.scenario import WoodValues
 from species import WoodError, reference_values
 

@@ -1,0 +1,159 @@
+"""Lines folded in order into the records as they stand; repeated lines count once, bad ones are reported."""
+
+from __future__ import annotations
+
+import unicodedata
+from collections.abc import Iterable
+from dataclasses import dataclass, field
+from typing import Any
+
+from assess.errors import ReadingError
+from assess.log.read import Line, Problem, problem_of
+from assess.record import record_problems
+from assess.record_set import apply_set
+
+OPERATIONS = ("put", "set", "drop", "conflict")
+SET_KINDS = ("member", "bay", "note", "survey")
+KINDS = (*SET_KINDS, "finding")
+ALLOWED = {
+    "put": {"put", "id", "data"},
+    "set": {"set", "id", "path", "data"},
+    "drop": {"drop", "id"},
+    "conflict": {"conflict", "id", "path", "data", "other"},
+}
+STAMP = {"n", "from", "at", "by"}
+LONGEST_ID = 100
+
+
+@dataclass
+class State:
+    """Records as they stand, by kind and id, and where each was last touched.
+
+    touched   (kind, id) -> number of the last line that changed it
+    history   (kind, id) -> the lines that changed it, in order
+    """
+
+    units: str
+    records: dict[str, dict[str, dict[str, Any]]] = field(default_factory=lambda: {kind: {} for kind in KINDS})
+    conflicts: list[Line] = field(default_factory=list)
+    touched: dict[tuple[str, str], int] = field(default_factory=dict)
+    history: dict[tuple[str, str], list[Line]] = field(default_factory=dict)
+    problems: list[Problem] = field(default_factory=list)
+    notices: list[str] = field(default_factory=list)
+    _seen: dict[tuple[str, int], dict[str, Any]] = field(default_factory=dict)
+    _alike: dict[tuple[str, str], str] = field(default_factory=dict)
+
+    @property
+    def members(self) -> dict[str, dict[str, Any]]:
+        """Raw member records by id, in the order they were first put."""
+        return self.records["member"]
+
+    def apply(self, line: Line) -> bool:
+        """Apply one line; False where it is a repeat or a problem, which is noted."""
+        try:
+            return self._apply(line)
+        except ReadingError as error:
+            name = line.event.get("id")
+            self.problems.append(problem_of(line.number, name if isinstance(name, str) else "", error))
+            return False
+
+    def _apply(self, line: Line) -> bool:
+        event = line.event
+        operation = check_event(event)
+        if "n" in event and "from" in event:
+            key = (event["from"], event["n"])
+            if key in self._seen:
+                if self._seen[key] != event:
+                    raise ReadingError("n", event["n"], "one content for each from and n", "is another line's number")
+                return False
+            self._seen[key] = event
+        if operation == "conflict":
+            self.conflicts.append(line)
+            return True
+        kind, name = event[operation], event["id"]
+        held = self.records[kind]
+        if operation == "drop":
+            if name not in held:
+                raise ReadingError("id", name, f"the id of a {kind} that is there", "is not there")
+            del held[name]
+        elif operation == "put":
+            if kind in SET_KINDS:
+                _refuse(record_problems(kind, event["data"], self.units))
+            elif not isinstance(event["data"], dict):
+                raise ReadingError("data", event["data"], "an object")
+            self._warn_alike(kind, name)
+            held[name] = event["data"]
+        else:
+            if name not in held:
+                raise ReadingError("id", name, f"the id of a {kind} that is there", "is not there")
+            changed = apply_set(kind, held[name], event["path"], event["data"])
+            _refuse(record_problems(kind, changed, self.units))
+            held[name] = changed
+        self.touched[kind, name] = line.number
+        self.history.setdefault((kind, name), []).append(line)
+        return True
+
+    def _warn_alike(self, kind: str, name: str) -> None:
+        """Ids that look alike are both kept, and said."""
+        key = (kind, "".join(unicodedata.normalize("NFKC", name).casefold().split()).translate(_LOOKALIKE))
+        other = self._alike.setdefault(key, name)
+        if other != name:
+            self.notices.append(f"{kind} ids {other!r} and {name!r} look alike; both are kept")
+
+
+# Letters of other scripts that print like Latin ones; enough to warn by.
+_LOOKALIKE = str.maketrans("авекмнорстухіјѕ", "abekmhopctyxijs")
+
+
+def _refuse(errors: list[ReadingError]) -> None:
+    if errors:
+        raise errors[0]
+
+
+def check_event(event: dict[str, Any]) -> str:
+    """The operation of a line whose form is right; raises ReadingError naming what is not."""
+    found = [name for name in OPERATIONS if name in event]
+    if len(found) != 1:
+        raise ReadingError("", "/".join(found) or sorted(event)[:3], "one of put, set, drop", "is no operation")
+    operation = found[0]
+    known = ALLOWED[operation] | STAMP
+    unknown = sorted(set(event) - known)
+    if unknown:
+        raise ReadingError(unknown[0][:40], unknown[0], ", ".join(sorted(known)), "is not a known field")
+    needed = ALLOWED[operation] - {"other"}
+    absent = sorted(needed - set(event))
+    if absent:
+        raise ReadingError(absent[0], None, "a value", "is missing")
+    kinds = KINDS if operation in ("put", "drop") else SET_KINDS
+    if event[operation] not in kinds:
+        raise ReadingError(operation, event[operation], "one of " + ", ".join(kinds), "is no kind of record")
+    check_id(event["id"])
+    stamped = event.get("n", 0)
+    if isinstance(stamped, bool) or not isinstance(stamped, int) or stamped < 0:
+        raise ReadingError("n", stamped, "a whole number from 0")
+    for name in ("from", "at", "by"):
+        if not isinstance(event.get(name, ""), str) or len(event.get(name, "")) > 200:
+            raise ReadingError(name, event[name], "text of at most 200 characters")
+    return operation
+
+
+def check_id(name: object) -> str:
+    """An id as it may stand: text of 1 to 100 characters, not blank, without control characters."""
+    if not isinstance(name, str) or not name.strip() or len(name) > LONGEST_ID:
+        raise ReadingError("id", name, f"text of 1 to {LONGEST_ID} characters, not only spaces")
+    if any(unicodedata.category(char) in ("Cc", "Cf", "Cs", "Zl", "Zp") for char in name):
+        raise ReadingError("id", name, "text on one line without control or invisible characters")
+    return name
+
+
+def fold(lines: Iterable[Line], units: str = "US") -> State:
+    """Fold lines in order.
+
+    lines     sound lines of a session, without the header
+    units     units of bare numbers
+    returns   State; a line that cannot be applied is among its problems
+    """
+    state = State(units)
+    for line in lines:
+        state.apply(line)
+    return state
