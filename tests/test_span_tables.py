@@ -1,4 +1,4 @@
-"""Floor-joist spans of published residential code tables, every cell, against the live load our own assessment gives."""
+"""Floor-joist spans of published residential code tables, every cell, against our own assessment."""
 
 from __future__ import annotations
 
@@ -43,7 +43,7 @@ def live_load_psf(cell: dict[str, str], span_in: float) -> float:
 
 @pytest.mark.parametrize("cell", cells(), ids=lambda c: f"{c['species']}-{c['grade']}-{c['size']}@{c['spacing_in']}")
 def test_span_table_cell(cell: dict[str, str]) -> None:
-    # Source of each cell: head of the table file. Spans there are rounded to the nearest inch, so 1 in is the tolerance.
+    # Source of each cell: head of the table file. Spans there are rounded to the nearest inch: hence 1 in.
     feet, inches = cell["span"].split("-")
     printed = int(feet) * 12 + int(inches)
     target = float(cell["live_psf"])

@@ -45,7 +45,8 @@ def carries_sentence(finding: Finding) -> str:
 
 def service_sentence(finding: Finding) -> str:
     """Whether deflection stays within its limits."""
-    return f"{finding.service} of deflection: ratio {ratio_text(finding.service_ratio)}"
+    words = "within limits" if finding.service == "within limits" else "over its limit"
+    return f"deflection {words}: ratio {ratio_text(finding.service_ratio)}"
 
 
 def change_sentence(finding: Finding) -> str | None:

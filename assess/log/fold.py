@@ -51,25 +51,34 @@ class State:
     def apply(self, line: Line) -> bool:
         """Apply one line; False where it is a repeat or a problem, which is noted."""
         try:
-            return self._apply(line)
+            return self.change(line)
         except ReadingError as error:
             name = line.event.get("id")
             self.problems.append(problem_of(line.number, name if isinstance(name, str) else "", error))
             return False
 
-    def _apply(self, line: Line) -> bool:
+    def change(self, line: Line) -> bool:
+        """Apply one line; False where it repeats one already applied.
+
+        raises   ReadingError where it is refused; nothing of it is kept
+        """
         event = line.event
         operation = check_event(event)
-        if "n" in event and "from" in event:
-            key = (event["from"], event["n"])
-            if key in self._seen:
-                if self._seen[key] != event:
-                    raise ReadingError("n", event["n"], "one content for each from and n", "is another line's number")
-                return False
-            self._seen[key] = event
+        key = (event["from"], event["n"]) if "n" in event and "from" in event else None
+        if key is not None and key in self._seen:
+            if self._seen[key] != event:
+                raise ReadingError("n", event["n"], "one content for each from and n", "is another line's number")
+            return False
         if operation == "conflict":
             self.conflicts.append(line)
-            return True
+        else:
+            self._fold(operation, line)
+        if key is not None:
+            self._seen[key] = event
+        return True
+
+    def _fold(self, operation: str, line: Line) -> None:
+        event = line.event
         kind, name = event[operation], event["id"]
         held = self.records[kind]
         if operation == "drop":
@@ -91,7 +100,6 @@ class State:
             held[name] = changed
         self.touched[kind, name] = line.number
         self.history.setdefault((kind, name), []).append(line)
-        return True
 
     def _warn_alike(self, kind: str, name: str) -> None:
         """Ids that look alike are both kept, and said."""

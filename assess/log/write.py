@@ -7,10 +7,10 @@ import fcntl
 import os
 import secrets
 from collections.abc import Callable
+from dataclasses import replace
 from datetime import UTC, datetime
 from typing import Any
 
-from assess.errors import ReadingError
 from assess.log.fold import State, check_event, fold
 from assess.log.lines import VERSION, encode
 from assess.log.read import Line, SessionError, SessionFile, parse_session, read_bytes
@@ -46,6 +46,8 @@ class SessionLog:
         self._descriptor: int | None = None
         self._size = 0
         self._torn = b""
+        self._lost: str | None = None  # why this file will never take a line again
+        self._kept: list[bytes] = []  # what is on disk, should the file be taken away
 
     @classmethod
     def create(
@@ -103,7 +105,9 @@ class SessionLog:
         return None
 
     def _load(self) -> None:
-        self.file = parse_session(self.path, read_bytes(self.path))
+        data = read_bytes(self.path)
+        self.file = parse_session(self.path, data)
+        self._kept = [data[: self.file.size]]
         self.state = fold(self.file.lines, self.file.units)
         self._size = self.file.size
         self._torn = self.file.torn
@@ -122,14 +126,10 @@ class SessionLog:
         self.count += 1
         stamped = event | {"n": self.count, "from": self.source, "at": self.clock(), "by": self.by}
         line = encode(stamped)
-        before = len(self.state.problems)
-        problems = list(self.state.problems)
-        if not self.state.apply(Line(0, stamped)):
-            problem = self.state.problems[before] if len(self.state.problems) > before else None
-            self.state.problems = problems
-            self.count -= 1
-            field = problem.field if problem is not None else ""
-            raise ReadingError(field, event.get("data"), problem.message if problem is not None else "a new line")
+        with contextlib.suppress(OSError):  # what is wrong with the file is said when the line is written
+            if self._descriptor is not None:
+                self._meet(self._descriptor)
+        self.state.change(Line(0, stamped))
         self.pending.append(line)
         self.retry()
 
@@ -147,7 +147,7 @@ class SessionLog:
 
     def _write(self, line: bytes) -> None:
         if self._descriptor is None:
-            reason = self._take()
+            reason = self._lost or self._take()
             if reason is not None:
                 raise OSError(5, reason)
         descriptor = self._descriptor
@@ -175,15 +175,17 @@ class SessionLog:
             self.close()
             raise
         self._size += len(line)
+        self._kept.append(line)
         if not self.file.ended:
-            self.file = _ended(self.file)
+            self.file = replace(self.file, ended=True)
 
     def _meet(self, descriptor: int) -> None:
         """Compare the file with what is expected; fold in and say what another has added."""
         status = os.fstat(descriptor)
         if status.st_nlink == 0:
             self.close()
-            raise OSError(2, "the session file was removed or replaced; save to another place")
+            self._lost = "the session file was removed or replaced; save to another place"
+            raise OSError(2, self._lost)
         here = self._size + len(self._torn)
         if status.st_size == here:
             return
@@ -198,6 +200,7 @@ class SessionLog:
         if added:
             self.notices.append(f"{len(added)} line(s) added by another program are folded in")
         self.file, self._size, self._torn = file, file.size, file.torn
+        self._kept = [data[: file.size]]
 
     def _set_aside(self, descriptor: int) -> None:
         """Keep a torn end beside the file, then cut the log back to its last whole line."""
@@ -227,13 +230,8 @@ class SessionLog:
 
         raises   SessionError where that file exists or cannot be made
         """
-        try:
-            kept = read_bytes(self.path)[: self._size]
-        except SessionError:
-            kept = b"".join([encode(self.file.header), *(encode(line.event) for line in self.file.lines)])
-        if kept and not kept.endswith(b"\n"):
-            kept += b"\n"
-        data = kept + b"".join(self.pending)
+        kept = b"".join(self._kept)
+        data = kept + (b"" if kept.endswith(b"\n") else b"\n") + b"".join(self.pending)
         try:
             descriptor = os.open(path, os.O_WRONLY | os.O_CREAT | os.O_EXCL | os.O_CLOEXEC, 0o644)
             try:
@@ -246,10 +244,10 @@ class SessionLog:
         except OSError as error:
             raise SessionError(f"{path!r} cannot be made: {error.strerror}") from None
         self.close()
-        self.path, self.pending, self._torn = path, [], b""
+        self.path, self.pending, self._torn, self._lost = path, [], b"", None
         self.read_only = self._take()
         self.file = parse_session(path, data)
-        self._size = self.file.size
+        self._size, self._kept = self.file.size, [data]
 
     def close(self) -> None:
         """Let go of the file and its lock; what is on disk stays, what waits stays in `pending`."""
@@ -257,12 +255,6 @@ class SessionLog:
             with contextlib.suppress(OSError):
                 os.close(self._descriptor)
             self._descriptor = None
-
-
-def _ended(file: SessionFile) -> SessionFile:
-    from dataclasses import replace
-
-    return replace(file, ended=True)
 
 
 def _flush_folder(path: str) -> None:
