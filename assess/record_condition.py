@@ -130,4 +130,10 @@ def condition_field() -> Typed:
         return tuple(found)
 
     models = list(dict.fromkeys(DEFECTS.values()))
-    return Typed(read, written, {"type": "array", "items": {"anyOf": [inlined(m) for m in models]}, "maxItems": 100})
+    return Typed(read, written, {"type": "array", "items": {"anyOf": [_schema(m) for m in models]}, "maxItems": 100})
+
+
+def _schema(model: type[_Defect]) -> dict[str, Any]:
+    schema = inlined(model)
+    schema["properties"]["defect"] = {"enum": [name for name, known in DEFECTS.items() if known is model]}
+    return schema

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import copy
 import difflib
 from collections.abc import Callable
 from typing import Any
@@ -53,7 +54,7 @@ class Typed:
         )
 
     def __get_pydantic_json_schema__(self, schema: CoreSchema, handler: GetJsonSchemaHandler) -> dict[str, Any]:
-        return self.schema
+        return copy.deepcopy(self.schema)  # pydantic writes titles and defaults into what it is given
 
 
 def written(value: Any) -> Any:
