@@ -9,7 +9,7 @@ import numpy as np
 from assess.combinations import CONCENTRATED
 from assess.mesh import Index, Mesh
 from assess.scenario import Scenario, Stage
-from assess.statics import solve
+from assess.statics import Statics, solve
 from assess.trace import Array
 from assess.variants import Rows
 
@@ -82,13 +82,15 @@ def effects(scenario: Scenario, rows: Rows, mesh: Mesh, stage: Stage, EI: Array,
     w, P = _cases(scenario, mesh, K, N)
     statics = solve(mesh.x, EI, mesh.supports, w, P)
     layout = Layout(N, mesh.supports.shape[1])
-    V = np.concatenate([statics.V_right[:, :, :-1], statics.V_left[:, :, 1:]], axis=2)
     relief = _relief(mesh)
+    # The places of the concentrated load come last; they are enveloped at once and need no deflection.
+    few = w.shape[1] - len(mesh.patches)
+    V = np.concatenate([statics.V_right[:, :few, :-1], statics.V_left[:, :few, 1:]], axis=2)
     V_relieved = relief.apply(V)
     for number, point in enumerate(scenario.point_loads):
         case = mesh.lengths + number
         V_relieved[:, case] = V[:, case] * _point_relief(mesh, rows, point.at_in) * relief.solid
-    unit_effects = np.concatenate([statics.M, V, V_relieved, statics.R, statics.y], axis=2)
+    unit_effects = np.concatenate([statics.M[:, :few], V, V_relieved, statics.R[:, :few], statics.y[:, :few]], axis=2)
 
     lengths = unit_effects[:, : mesh.lengths]
     zero = np.zeros_like(lengths)
@@ -119,9 +121,7 @@ def effects(scenario: Scenario, rows: Rows, mesh: Mesh, stage: Stage, EI: Array,
         if scenario.simple:
             sums[CONCENTRATED] = _patch_on_simple_span(mesh, layout, relief, P_member, rows.patch_along_in[:, None])
         else:
-            # Relief follows the shear at the end of the zone, where the patch stands at d from the face.
-            placed = unit_effects[:, mesh.lengths + len(items) :] * P_member[:, None]
-            sums[CONCENTRATED] = (np.maximum(placed.max(axis=1), 0.0), np.minimum(placed.min(axis=1), 0.0))
+            sums[CONCENTRATED] = _patch_placed(statics, few, relief, P_member)
     return Effects(layout, sums, unit)
 
 
@@ -217,6 +217,21 @@ def _point_relief(mesh: Mesh, rows: Rows, at_in: float) -> Array:
         between = (mesh.mid > low) & (mesh.mid < high) & within[:, None]
         factor = np.where(between, np.clip(reach / depth, 0.0, 1.0)[:, None], factor)
     return np.concatenate([factor, factor], axis=1)
+
+
+def _patch_placed(statics: Statics, first: int, relief: Relief, P_lb: Array) -> Pair:
+    """Worst effects of a load P on its patch over all the places tried, each a case of the statics from `first` on."""
+
+    def worst(high: bool) -> Array:
+        reduce, clip = (np.max, np.maximum) if high else (np.min, np.minimum)
+        M, R = reduce(statics.M[:, first:], axis=1), reduce(statics.R[:, first:], axis=1)
+        right, left = reduce(statics.V_right[:, first:], axis=1), reduce(statics.V_left[:, first:], axis=1)
+        V = np.concatenate([right[:, :-1], left[:, 1:]], axis=1)
+        # Relief follows the shear at the end of the zone, where the patch stands at d from the face.
+        parts = [M, V, relief.apply(V), R, np.zeros_like(M)]
+        return clip(np.concatenate(parts, axis=1), 0.0) * P_lb
+
+    return worst(True), worst(False)
 
 
 def _patch_on_simple_span(mesh: Mesh, layout: Layout, relief: Relief, P_lb: Array, along_in: Array) -> Pair:

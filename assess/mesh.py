@@ -17,6 +17,7 @@ Index = NDArray[np.intp]
 # 40 to a span: a peak of the moment between two stations is missed by at most w h^2/8, 0.06 % of w L^2/8.
 GRID = 40
 RELIEF_LIMIT = 0.25  # of the loaded length; ours, stricter than the clause
+FRACTIONS = np.linspace(0.0, 1.0, GRID + 1)
 PATCHES = 12  # places of the concentrated load in a span of a member that is not one simple span
 
 
@@ -71,7 +72,9 @@ def mesh(scenario: Scenario, rows: Rows) -> Mesh:
         bounds.insert(0, left)
     if scenario.overhang_right_in > 0:
         bounds.append(right)
-    fractions = np.linspace(0.0, 1.0, GRID + 1)
+    placed = not scenario.simple and bool(rows.concentrated_lb.any())
+    # The edges of the patch's places are stations too, and as close as the grid they then stand in for.
+    fractions = FRACTIONS[:: 2 if placed else 1]
     for start, end in pairwise(bounds):
         columns.append(start + (end - start) * fractions)
     place = sum(column.shape[1] for column in columns)
@@ -105,7 +108,7 @@ def mesh(scenario: Scenario, rows: Rows) -> Mesh:
         columns.append(np.tile(np.array([loss.from_in, loss.to_in]), (K, 1)))
         place += 2
     patch_places: list[int] = []
-    if not scenario.simple and bool(rows.concentrated_lb.any()):
+    if placed:
         for edges in patch_edges(bounds, supports, rows.patch_along_in[:, None]):
             columns.append(edges)
             patch_places.append(place)
@@ -150,11 +153,11 @@ def patch_edges(bounds: list[Array], supports: Array, along_in: Array) -> list[A
     """
     edges: list[Array] = []
     width = np.minimum(along_in, bounds[-1] - bounds[0])
+    fractions = np.linspace(0.0, 1.0, PATCHES + 1)
     for start, end in pairwise(bounds):
         # A patch longer than the length it stands on reaches over the support, never off the member.
-        for fraction in np.linspace(0.0, 1.0, PATCHES + 1):
-            a = np.clip(start + fraction * (end - start - along_in), bounds[0], bounds[-1] - width)
-            edges.append(np.concatenate([a, a + width], axis=1))
+        left = np.clip(start + fractions * (end - start - along_in), bounds[0], bounds[-1] - width)
+        edges += [np.stack([a, a + width[:, 0]], axis=1) for a in left.T]
     for i in range(supports.shape[1]):
         at = supports[:, i : i + 1]
         if at[0, 0] > bounds[0][0, 0] and at[0, 0] < bounds[-1][0, 0]:

@@ -39,7 +39,8 @@ def test_checksum_is_the_crc32_of_the_line_without_it() -> None:
     import binascii
 
     line = encode({"willcarry": 1}).decode().rstrip("\n")
-    assert line == '{"willcarry": 1, "crc": "%08x"}' % binascii.crc32(b'{"willcarry": 1}')
+    crc = binascii.crc32(b'{"willcarry": 1}')
+    assert line == f'{{"willcarry": 1, "crc": "{crc:08x}"}}'
 
 
 @pytest.mark.parametrize(
