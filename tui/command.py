@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import io
 import os
 import sys
 import tempfile
@@ -52,6 +53,9 @@ def main(arguments: Sequence[str] | None = None) -> int:
     returns     exit status (see tui.exits)
     """
     words = list(sys.argv[1:] if arguments is None else arguments)
+    for stream in (sys.stdout, sys.stderr):
+        if isinstance(stream, io.TextIOWrapper) and stream.encoding.lower() not in ("utf-8", "utf8"):
+            stream.reconfigure(errors="backslashreplace")  # a plain terminal shows what it can, and stops nothing
     try:
         return _dispatch(words)
     except KeyboardInterrupt:
