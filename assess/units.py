@@ -37,18 +37,18 @@ percent = [ratio] = pct
 degree = [angle] = deg = degrees
 """
 
-# Spellings people use that are no pint names; the left side is compared in this exact form after case folding where
-# no two units differ by case alone.
+# Spellings people use that are no names of ours; looked up as typed, then in lower case, squares written as 2.
 _SPELLINGS = {
-    '"': "in", "″": "in", "”": "in", "''": "in", "'": "ft", "′": "ft", "’": "ft", "in.": "in", "ft.": "ft",
-    "lb/ft2": "psf", "lb/ft^2": "psf", "lb/sqft": "psf", "psf.": "psf", "lbs/ft2": "psf", "lb/ft²": "psf",
-    "lb/ft": "plf", "lbs/ft": "plf", "lb/in2": "psi", "lb/in²": "psi", "kn/m": "kN/m", "kn/m2": "kPa",
-    "kn/m²": "kPa", "kn": "kN", "n": "N", "kpa": "kPa", "mpa": "MPa", "gpa": "GPa", "n/mm2": "MPa", "n/mm²": "MPa",
-    "ft²": "ft2", "sq ft": "ft2", "m²": "m2", "°": "deg", "%": "%", "kg": "kgf", "pounds": "lb", "pound": "lb",
+    '"': "in", "'": "ft", "in.": "in", "ft.": "ft", "lb.": "lb", "lbs.": "lb", "pound": "lb", "pounds": "lb",
+    "lb/ft2": "psf", "lbs/ft2": "psf", "lbf/ft2": "psf", "lb/sqft": "psf", "lb/sq ft": "psf", "lbs/sq ft": "psf",
+    "lb/ft": "plf", "lbs/ft": "plf", "lbf/ft": "plf", "lb/in2": "psi", "lbs/in2": "psi", "lbf/in2": "psi",
+    "kn": "kN", "n": "N", "kn/m": "kN/m", "n/m": "N/m", "kn/m2": "kPa", "n/m2": "Pa", "n/mm2": "MPa", "kpa": "kPa",
+    "pa": "Pa", "mpa": "MPa", "gpa": "GPa", "kg": "kgf", "sq ft": "ft2", "sq. ft.": "ft2", "sf": "ft2", "sq m": "m2",
+    "°": "deg",
 }  # fmt: skip
 _TEMPERATURES = {"f": "degF", "°f": "degF", "degf": "degF", "c": "degC", "°c": "degC", "degc": "degC"}
-_KINDS = {"in": "inch", "psf": "psf", "plf": "plf", "lb": "pound_force", "psi": "psi", "%": "percent", "deg": "degree"}
-_KINDS["ft2"] = "ft2"
+# Units by which a reading counts as read in metric.
+METRIC = frozenset({"m", "mm", "cm", "kPa", "Pa", "kN", "N", "kgf", "MPa", "GPa", "kN/m", "N/m", "m2", "degC"})
 
 
 @functools.cache
@@ -66,7 +66,7 @@ def canonical(unit: str) -> str | None:
     >>> canonical('"'), canonical("KPA"), canonical("lbs"), canonical("furlong")
     ('in', 'kPa', 'lb', None)
     """
-    text = unit.strip()
+    text = unit.strip().replace("²", "2").replace("^2", "2")
     folded = text.lower()
     if folded in _TEMPERATURES:
         return _TEMPERATURES[folded]
@@ -107,11 +107,11 @@ def factor(unit: str, engine_unit: str) -> float:
     registry = _registry()
     try:
         given = registry.parse_units(_pint_name(unit))
-        wanted = registry.parse_units(_KINDS[engine_unit])
+        wanted = registry.parse_units(_pint_name(engine_unit))
         return float(registry.convert(1.0, given, wanted))
-    except (pint.DimensionalityError, pint.UndefinedUnitError, KeyError):
+    except (pint.DimensionalityError, pint.UndefinedUnitError):
         raise ReadingError(
-            "", unit, f"a unit that measures what {engine_unit} does", "is the wrong kind of unit"
+            "", unit, f"a unit that measures what {engine_unit} does", "has the wrong kind of unit"
         ) from None
 
 
