@@ -295,7 +295,7 @@ def holding(R_D: Array) -> Array:
     return maximum(0.6 * R_D, 0.0)
 
 
-def uplift(rows: Rows, env: Envelope, mesh: Mesh, trace: Trace | None = None) -> Checked | None:
+def uplift(scenario: Scenario, rows: Rows, env: Envelope, mesh: Mesh, trace: Trace | None = None) -> Checked | None:
     """Lifting at a support against 0.6 of its dead reaction; None where nothing lifts.
 
     source   engineering basis section 3; ASCE 7-16 2.4.1
@@ -304,6 +304,7 @@ def uplift(rows: Rows, env: Envelope, mesh: Mesh, trace: Trace | None = None) ->
     dead = env.effects.sums["dead"][0][:, None, R]
     factors_dead = np.array([c.of("dead") for c in env.combinations]).reshape(1, -1, 1)
     low = env.low(R) - factors_dead * dead
+    low[:, :, scenario.hold_down] = 0.0  # held down by what is recorded there
     if not bool((low < 0.0).any()):
         return None
     if trace is not None:
@@ -315,9 +316,11 @@ def uplift(rows: Rows, env: Envelope, mesh: Mesh, trace: Trace | None = None) ->
     with np.errstate(divide="ignore", invalid="ignore"):
         ratio = np.where(demand > 0.0, demand / capacity, 0.0)
     base = env.base_low[:, :, R] - factors_dead * dead
+    unit = env.unit_low[:, :, R].copy()
+    base[:, :, scenario.hold_down] = unit[:, :, scenario.hold_down] = 0.0
     supports = mesh.supports_in
     labels = tuple(c.name.replace("D+", "0.6D+", 1) if c.name.startswith("D+") else c.name for c in env.combinations)
     return finish(
-        "uplift", "lb", "ASCE 7-16 2.4.1", "uplift", labels, ratio, capacity + base, -env.unit_low[:, :, R],
+        "uplift", "lb", "ASCE 7-16 2.4.1", "uplift", labels, ratio, capacity + base, -unit,
         demand, np.broadcast_to(capacity, demand.shape), supports, {},
     )  # fmt: skip

@@ -229,7 +229,8 @@ def _patch_placed(statics: Statics, first: int, relief: Relief, P_lb: Array) -> 
         V = np.concatenate([right[:, :-1], left[:, 1:]], axis=1)
         # Relief follows the shear at the end of the zone, where the patch stands at d from the face.
         parts = [M, V, relief.apply(V), R, np.zeros_like(M)]
-        return clip(np.concatenate(parts, axis=1), 0.0) * P_lb
+        clipped: Array = clip(np.concatenate(parts, axis=1), 0.0) * P_lb
+        return clipped
 
     return worst(True), worst(False)
 

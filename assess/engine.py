@@ -60,7 +60,7 @@ def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
         checks.shear(scenario, rows, env, stations, left[0], part, f, trace),
         checks.bearing(scenario, rows, env, stations, part, f, trace),
     ]
-    lift = checks.uplift(rows, env, stations, trace)
+    lift = checks.uplift(scenario, rows, env, stations, trace)
     if lift is not None:
         strength.append(lift)
     live, total = service.deflection(scenario, rows, env, stations, trace)

@@ -128,7 +128,9 @@ def _live_load(scenario: Scenario, computed: Computed, no_value: bool) -> tuple[
     """Greatest uniform load by strength and by live deflection, of the worst row."""
     env = computed.envelope
     judged = computed.rows.judged
-    to_psf = 144.0 / computed.rows.tributary_in[:judged]  # lb/in of member -> psf over its tributary width
+    # lb/in of member -> psf over its tributary width, before any reduction
+    reduction = scenario.live.reduction if scenario.live is not None else 1.0
+    to_psf = 144.0 / computed.rows.tributary_in[:judged] / reduction
     uniform = [i for i, c in enumerate(env.combinations) if not c.of(CONCENTRATED)]
     limits = [(float((c.greatest[:judged, uniform].min(axis=1) * to_psf).min()), c.name) for c in computed.strength]
     strength, strength_name = min(limits, key=lambda pair: pair[0])

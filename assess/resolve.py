@@ -49,8 +49,11 @@ def resolve(member: Member) -> Scenario:
     if member.ends_held is None:
         notes.append("ends held against rotation (default)")
     on_top = kind.loaded_on_top if member.loaded_on is None else member.loaded_on == "top"
+    separate = len(spans_in) > 1 and member.over_supports == "separate"
     if len(spans_in) > 1 and member.over_supports is None:
         notes.append("continuous over the inner supports (default)")
+    if separate:
+        notes.append("each span is a piece of its own; a measured inner bearing is shared half and half, as if butted")
     limits = member.limits
     limit_live = limits.live if limits is not None and limits.live is not None else kind.limit_live
     limit_total = limits.total if limits is not None and limits.total is not None else kind.limit_total
@@ -71,6 +74,8 @@ def resolve(member: Member) -> Scenario:
         bearing_in=bearing_in,
         bearing_measured=measured,
         bearing_on=member.bearing_on or "wood",
+        separate=separate,
+        hold_down=tuple(support - 1 for support in member.hold_down or ()),
         loaded_on_top=on_top,
         spacing_in=spacing,
         tributary_in=tributary,
@@ -175,15 +180,30 @@ def _kind_cautions(member: Member) -> tuple[str, ...]:
     if member.bearing_on == "masonry":
         said.append("on masonry the usual least bearing is 3 in (IRC R502.6)")
     if member.ties_rafters:
-        said.append("this ceiling joist also ties rafters: its tension is not assessed")
+        said.append("this member also ties rafters: its tension is not assessed")
+    if member.kind == "rafter" and not member.ties_rafters:
+        said.append("a rafter pushes its wall outward where nothing ties it: thrust and ties are not assessed")
+    if member.stands_for is not None:
+        said.append(
+            f"speaks for {member.stands_for.count} like members, of which {member.stands_for.measured} were measured"
+        )
+    said += [f"not seen: {text}" for text in member.not_seen or ()]
     return tuple(said)
 
 
 def pending(member: Member) -> tuple[str, ...]:
     """What is recorded but not yet assessed; such a member is never called adequate."""
     found = [f"condition: {defect.defect}" for defect in member.condition or ()]
-    if member.added:
-        found.append("added parts")
-    if member.new_supports:
-        found.append("new supports")
-    return tuple(found)
+    if member.ties_rafters:
+        found.append("tension from the rafters it ties")
+    if member.hanger is not None and member.hanger.kind == "fasteners":
+        found.append("hung by fasteners")
+    words = {
+        "added": "added parts",
+        "new_supports": "new supports",
+        "sag": "sag",
+        "stiffness_test": "stiffness test",
+        "identified": "identification of the wood",
+        "graded": "characteristics measured in grading",
+    }
+    return (*found, *(text for name, text in words.items() if getattr(member, name)))

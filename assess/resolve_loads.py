@@ -9,8 +9,9 @@ from assess.errors import ReadingError
 from assess.materials import layer_psf
 from assess.record import Member
 from assess.record_parts import TypedUse
+from assess.reduction import reduction
 from assess.scenario import LineLoad, PointLoad, UseLoad
-from assess.uses import use_named
+from assess.uses import Use, use_named
 
 PATCH_IN = 30.0  # ASCE 7-16 4.4: 2.5 ft square where no other footprint is stated
 
@@ -83,6 +84,8 @@ def _use(member: Member, use: str | TypedUse, field: str, notes: list[str]) -> U
         concentrated = use.concentrated.value if use.concentrated is not None else None
         along, across = patch or (PATCH_IN, PATCH_IN)
         partition = _partition(member, 0.0, notes)
+        if member.reduce:
+            notes.append("no live-load reduction: it comes with a named use only")
         return UseLoad(use.name or "typed use", use.live.value, partition, concentrated, along, across, "as typed")
     named = use_named(use)
     along, across = patch or named.concentrated_patch_in
@@ -93,7 +96,17 @@ def _use(member: Member, use: str | TypedUse, field: str, notes: list[str]) -> U
             f"concentrated load {named.concentrated_lb:,.0f} lb on {along:g} x {across:g} in, instead of the uniform "
             "live load; the partition allowance stays; a member at a spacing takes what lies on its own strip"
         )
-    return UseLoad(named.name, named.uniform_psf, partition, named.concentrated_lb, along, across, named.source)
+    factor = _reduction(member, named, notes) if member.reduce else 1.0
+    return UseLoad(named.name, named.uniform_psf, partition, named.concentrated_lb, along, across, named.source, factor)
+
+
+def _reduction(member: Member, use: Use, notes: list[str]) -> float:
+    if member.supported_area is None:
+        raise ReadingError("supported_area", None, "the area the member supports, e.g. 400 ft2", "is missing")
+    assert member.kind is not None
+    factor, words = reduction(member.kind, use.uniform_psf, use.reducible, member.supported_area.value)
+    notes.append(words)
+    return factor
 
 
 def _partition(member: Member, by_use: float, notes: list[str]) -> float:

@@ -80,7 +80,10 @@ class LineLoad:
 
 @dataclass(frozen=True)
 class UseLoad:
-    """What a use puts on the floor: psf, the partition allowance beside it, and the concentrated load."""
+    """What a use puts on the floor: psf, the partition allowance beside it, and the concentrated load.
+
+    reduction   factor on live_psf by ASCE 7-16 4.7, 1.0 where none is asked for or allowed
+    """
 
     name: str
     live_psf: float
@@ -89,6 +92,7 @@ class UseLoad:
     patch_along_in: float
     patch_across_in: float
     source: str
+    reduction: float = 1.0
 
 
 @dataclass(frozen=True)
@@ -122,6 +126,8 @@ class Stage:
 class Scenario:
     """One member ready to be computed; positions in inches from the first support's design point.
 
+    separate     True where each span is a piece of its own, lapped or butted over the supports
+    hold_down    supports (from 0) recorded as held against uplift
     face_in      distance from each support's design point to its face (0 where spans were given as design)
     bearing_in   length of bearing at each support, along the member
     live         the use that is judged; None for a roof member
@@ -140,6 +146,8 @@ class Scenario:
     bearing_in: tuple[float, ...]
     bearing_measured: tuple[bool, ...]
     bearing_on: str
+    separate: bool
+    hold_down: tuple[int, ...]
     loaded_on_top: bool
     spacing_in: float | None
     tributary_in: float

@@ -102,7 +102,7 @@ def variants(scenario: Scenario) -> Rows:
         tributary_in=column(scenario.tributary_in),
         dead_psf=column(scenario.dead_psf),
         moisture_percent=column(scenario.moisture_percent),
-        live_psf=np.array([use.live_psf for use in uses]),
+        live_psf=np.array([use.live_psf * use.reduction for use in uses]),
         partition_psf=np.array([use.partition_psf for use in uses]),
         concentrated_lb=np.array([use.concentrated_lb or 0.0 for use in uses]),
         patch_along_in=np.array([use.patch_along_in for use in uses]),

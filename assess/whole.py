@@ -2,11 +2,15 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
+
 from assess.engine import compute
 from assess.finding import Finding
 from assess.judge import judge
+from assess.pieces import split, worst
 from assess.record import Member
 from assess.resolve import resolve
+from assess.scenario import Scenario
 from assess.trace import Trace
 from assess.working import Line, working
 
@@ -20,6 +24,8 @@ def assess(member: Member) -> Finding:
     source    engineering basis: NDS 2018, ASCE 7-16, IBC 2021
     """
     scenario = resolve(member)
+    if scenario.separate:
+        return worst([(start, judge(piece, compute(piece))) for start, piece in split(scenario)])
     return judge(scenario, compute(scenario))
 
 
@@ -31,6 +37,17 @@ def explain(member: Member) -> tuple[Finding, list[Line]]:
     raises    ReadingError as `assess` does
     """
     scenario = resolve(member)
+    if not scenario.separate:
+        return _traced(scenario)
+    found, lines = [], []
+    for number, (start, piece) in enumerate(split(scenario), 1):
+        finding, steps = _traced(piece)
+        found.append((start, finding))
+        lines += [replace(step, scope=f"piece {number}: {step.scope}") for step in steps]
+    return worst(found), lines
+
+
+def _traced(scenario: Scenario) -> tuple[Finding, list[Line]]:
     trace = Trace()
     computed = compute(scenario, trace)
     return judge(scenario, computed), working(computed, trace)

@@ -10,6 +10,8 @@ import pytest
 from assess.engine import compute
 from assess.finding import Finding
 from assess.judge import judge
+from assess.pieces import split, worst
+from assess.reduction import reduction
 from assess.scenario import Edge, LineLoad, PointLoad, Scenario, UseLoad
 from assess.trace import Trace
 from assess.working import working
@@ -241,3 +243,50 @@ def test_dead_load_alone_too_much_is_urgent() -> None:
     assert found.shore_now
     assert found.live_load.strength_psf == 0.0
     assert any("overloaded as it stands" in caution for caution in found.cautions)
+
+
+def test_pieces_over_supports_are_simple_spans() -> None:
+    # 150 + 110 in, butted: the longer piece decides, exactly as that simple span alone does
+    loads = (PointLoad("stove", "live", 300.0, 200.0),)
+    both = scenario(spans_in=(150.0, 110.0), separate=True, point_loads=loads)
+    both = replace(both, bearing_measured=(False,) * 3)
+    pieces = [find(piece) for _, piece in split(both)]
+    merged = worst(list(zip((0.0, 150.0), pieces, strict=True)))
+    short = scenario(spans_in=(110.0,), point_loads=(replace(loads[0], at_in=50.0),))
+    alone = [find(scenario(spans_in=(150.0,))), find(short)]
+    ratios = [f.ratio for f in alone if f.ratio is not None]
+    loads_psf = [f.live_load.strength_psf for f in alone if f.live_load.strength_psf is not None]
+    assert merged.ratio == pytest.approx(max(ratios), rel=1e-12)
+    assert merged.live_load.strength_psf == pytest.approx(min(loads_psf), rel=1e-12)
+    assert merged.governs is not None
+    assert merged.governs.at_in == pytest.approx(75.0 if ratios[0] == merged.ratio else 200.0, abs=4.0)
+
+
+def test_a_measured_inner_bearing_is_shared_by_butted_pieces() -> None:
+    made = scenario(spans_in=(150.0, 110.0), separate=True, face_in=(0.75,) * 3, bearing_in=(3.0, 4.0, 3.0))
+    made = replace(made, bearing_measured=(True,) * 3)
+    assert [piece.bearing_in for _, piece in split(made)] == [(3.0, 2.0), (2.0, 3.0)]
+
+
+def test_a_recorded_hold_down_answers_uplift() -> None:
+    loose = scenario(spans_in=(120.0, 120.0), bottom=Edge(held=True), dead_psf=5.0)
+    assert find(loose).verdict == "inadequate"
+    held = replace(loose, hold_down=(0, 2))
+    assert not [c for c in find(held).checks if c.check == "uplift" and c.ratio]
+    assert find(held).verdict == "adequate"
+
+
+def test_live_load_reduction_by_hand() -> None:
+    # ASCE 7-16 (4.7-1): interior beam, KLL 2, AT 400 ft2: 0.25 + 15/sqrt(800) = 0.7803; the floor is 0.5 Lo
+    assert reduction("beam", 50.0, True, 400.0)[0] == pytest.approx(0.25 + 15 / 800**0.5)
+    assert reduction("beam", 50.0, True, 199.0)[0] == 1.0
+    assert reduction("beam", 50.0, True, 1e5)[0] == 0.5
+    assert reduction("beam", 125.0, True, 400.0)[0] == 1.0
+    assert reduction("beam", 50.0, False, 400.0)[0] == 1.0
+    assert reduction("joist", 50.0, True, 399.0)[0] == 1.0
+    reduced, whole = find(scenario(live=replace(PLAIN, reduction=0.78))), find(scenario())
+    assert whole.ratio is not None
+    assert whole.live_load.strength_psf is not None
+    assert reduced.ratio == pytest.approx(whole.ratio * (10 + 0.78 * 40) / 50, rel=1e-9)
+    # the load it can carry is told unreduced
+    assert reduced.live_load.strength_psf == pytest.approx(whole.live_load.strength_psf / 0.78, rel=1e-9)
