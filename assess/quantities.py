@@ -76,6 +76,9 @@ LINE_LOAD = Quantity(
     "line load", "plf", "plf", "kN/m", -1e5, 1e5, False, 0.0, "a load to 100,000 plf, e.g. 120 plf or 1.8 kN/m"
 )
 FORCE = Quantity("force", "lb", "lb", "kN", -1e6, 1e6, False, 0.0, "a force to 1,000,000 lb, e.g. 420 lb or 1.9 kN")
+CONCENTRATED = Quantity(
+    "concentrated load", "lb", "lb", "kN", 0.0, 1e6, False, 0.0, "a load of 0 to 1,000,000 lb, e.g. 2000 lb or 8.9 kN"
+)
 WEIGHT = Quantity(
     "weight", "lb", "lb", "kN", 0.0, 1e6, True, 0.0, "a weight over 0 to 1,000,000 lb, e.g. 400 lb or 1.8 kN"
 )
@@ -99,5 +102,5 @@ DEFLECTION = Quantity(
 
 ALL = (
     SIZE, LENGTH, HEIGHT, MARGIN, SAG, LEVEL, SPAN, OVERHANG, POSITION, SPACING, TRIBUTARY, BEARING, AREA_LOAD,
-    LINE_LOAD, FORCE, WEIGHT, STRESS, MODULUS, MOISTURE, TEMPERATURE, SLOPE, AREA, DEFLECTION,
+    LINE_LOAD, FORCE, CONCENTRATED, WEIGHT, STRESS, MODULUS, MOISTURE, TEMPERATURE, SLOPE, AREA, DEFLECTION,
 )  # fmt: skip

@@ -10,47 +10,19 @@ from assess import quantities as q
 from assess.errors import ReadingError
 from assess.kinds import KINDS
 from assess.reading import Reading
+from assess.record_added import Added, NewSupport
 from assess.record_condition import Defect, condition_field
-from assess.record_errors import problems
-from assess.record_fields import (
-    Record,
-    choice,
-    measured,
-    records,
-    several,
-    text,
-    whole,
-    words_or_reading,
-    written,
-    yes_no,
-)
-from assess.record_parts import (
-    Added,
-    Graded,
-    Hanger,
-    Layer,
-    Levels,
-    Limits,
-    LineLoad,
-    NewSupport,
-    PointLoad,
-    Size,
-    StandsFor,
-    StiffnessTest,
-    TypedUse,
-    Wood,
-    dead_field,
-    edge_field,
-    free_object,
-    partitions_field,
-    record_of,
-    sag_field,
-    texts,
-    use_field,
-)
+from assess.record_errors import SeveralReadingsError, listed, problems
+from assess.record_fields import Record, choice, measured, text, whole, words_or_reading, written, yes_no
+from assess.record_lists import check_plain, free_data, record_of, records, several, texts
+from assess.record_loads import Layer, Limits, LineLoad, PointLoad, dead_field, edge_field, partitions_field
+from assess.record_parts import Hanger, Size, StandsFor, TypedUse, Wood, use_field
+from assess.record_seen import Graded, Levels, StiffnessTest, sag_field
+from assess.record_survey import Survey
 
 MOST_SPANS = 5
-M = TypeVar("M", bound="Fields")
+LONGEST_NOTE = 50_000
+R = TypeVar("R", bound=Record)
 
 
 class Fields(Record):
@@ -64,8 +36,8 @@ class Fields(Record):
     orientation: Annotated[str | None, choice("edge", "flat")] = None
     wood: Annotated[Wood | None, record_of(Wood)] = None
     spans: Annotated[tuple[Reading, ...] | None, several(q.SPAN, MOST_SPANS)] = None
-    overhang_left: Annotated[Reading | None, measured(q.SPAN)] = None
-    overhang_right: Annotated[Reading | None, measured(q.SPAN)] = None
+    overhang_left: Annotated[Reading | None, measured(q.OVERHANG)] = None
+    overhang_right: Annotated[Reading | None, measured(q.OVERHANG)] = None
     span_basis: Annotated[str | None, choice("clear", "design")] = None
     over_supports: Annotated[str | None, choice("continuous", "separate")] = None
     bearing: Annotated[tuple[Reading, ...] | None, several(q.BEARING, MOST_SPANS + 1)] = None
@@ -88,7 +60,7 @@ class Fields(Record):
     partitions: Annotated[bool | Reading | None, partitions_field()] = None
     reduce: Annotated[bool | None, yes_no()] = None
     supported_area: Annotated[Reading | None, measured(q.AREA)] = None
-    concentrated_on: Annotated[tuple[Reading, ...] | None, several(q.LENGTH, 2)] = None
+    concentrated_on: Annotated[tuple[Reading, ...] | None, several(q.LENGTH, 2, 2)] = None
     snow: Annotated[Reading | None, measured(q.AREA_LOAD)] = None
     roof_live: Annotated[Reading | None, measured(q.AREA_LOAD)] = None
     slope: Annotated[Reading | None, measured(q.SLOPE)] = None
@@ -102,7 +74,7 @@ class Fields(Record):
     photos: Annotated[tuple[str, ...] | None, texts(200, text(255))] = None
     remarks: Annotated[str | None, text()] = None
     not_seen: Annotated[tuple[str, ...] | None, texts(100, text(500))] = None
-    identified: Annotated[dict[str, Any] | None, free_object()] = None
+    identified: Annotated[dict[str, Any] | None, free_data("object")] = None
     graded: Annotated[Graded | None, record_of(Graded)] = None
     added: Annotated[tuple[Added, ...] | None, records(Added, 20)] = None
     new_supports: Annotated[tuple[NewSupport, ...] | None, records(NewSupport, 5)] = None
@@ -113,8 +85,6 @@ class Fields(Record):
             raise ReadingError(
                 "tributary", written(self.tributary), "spacing or tributary, not both", "and spacing are both given"
             )
-        if self.concentrated_on is not None and len(self.concentrated_on) != 2:
-            raise ReadingError("concentrated_on", written(self.concentrated_on), "two lengths, along and across")
         return self
 
 
@@ -154,22 +124,15 @@ class Member(Fields):
             lacking.append("proposed_use")
         if self.spacing is None and self.tributary is None:
             lacking.append("spacing or tributary")
+        if self.hanger is not None and self.hanger.kind == "fasteners" and self.hanger.de is None:
+            lacking.append("hanger.de")
         return lacking
 
 
 class Note(Record):
     """A note about anything."""
 
-    text: Annotated[str, text(100_000)]
-
-
-class Survey(Record):
-    """What holds for the whole survey: tolerances of instruments, stock and site limits for repairs, code editions."""
-
-    tolerances: Annotated[dict[str, Any] | None, free_object()] = None
-    stock: Annotated[list[Any] | None, free_object()] = None
-    site_limits: Annotated[dict[str, Any] | None, free_object()] = None
-    codes: Annotated[dict[str, Any] | None, free_object()] = None
+    text: Annotated[str, text(LONGEST_NOTE)]
 
 
 KINDS_OF_RECORD: dict[str, type[Record]] = {"member": Member, "bay": Bay, "note": Note, "survey": Survey}
@@ -180,21 +143,20 @@ def record_problems(kind: str, data: object, units: str = "US") -> list[ReadingE
 
     kind    'member', 'bay', 'note' or 'survey'
     data    as the session file has it
-    """
-    from assess.record_consistency import consistency_problems
+    units   units of bare numbers, 'US' or 'SI'
 
-    model = KINDS_OF_RECORD[kind]
-    if not isinstance(data, dict):
-        return [ReadingError("", data, "an object")]
+    >>> [error.field for error in record_problems("member", {"kind": "joyst", "alike": 0})]
+    ['kind', 'alike']
+    """
     try:
-        record = model.model_validate(data, context={"units": units})
-    except ValidationError as error:
-        return problems(error, model)
-    return consistency_problems(record) if isinstance(record, Fields) else []
+        _read(KINDS_OF_RECORD[kind], data, units)
+    except ReadingError as error:
+        return listed(error)
+    return []
 
 
 def read_member(data: object, units: str = "US") -> Member:
-    """A member from its data; raises the first problem as ReadingError.
+    """A member from its data; raises what is wrong with it as ReadingError.
 
     >>> read_member({"size": {"width": "1 5/8", "depth": "7 1/2 in"}}).size.depth.value
     7.5
@@ -203,39 +165,34 @@ def read_member(data: object, units: str = "US") -> Member:
 
 
 def read_bay(data: object, units: str = "US") -> Bay:
-    """A bay from its data; raises the first problem as ReadingError."""
+    """A bay from its data; raises what is wrong with it as ReadingError."""
     return _read(Bay, data, units)
 
 
-def _read(model: type[M], data: object, units: str) -> M:
+def read_note(data: object) -> Note:
+    """A note from its data; raises what is wrong with it as ReadingError."""
+    return _read(Note, data, "US")
+
+
+def read_survey(data: object, units: str = "US") -> Survey:
+    """What holds for the whole survey from its data; raises what is wrong with it as ReadingError."""
+    return _read(Survey, data, units)
+
+
+def _read(model: type[R], data: object, units: str) -> R:
     from assess.record_consistency import consistency_problems
 
     if not isinstance(data, dict):
-        raise ReadingError("", data, "an object")
+        raise ReadingError("", data if isinstance(data, str) else type(data).__name__, "an object")
+    check_plain(data)
     try:
         record = model.model_validate(data, context={"units": units})
     except ValidationError as error:
-        raise problems(error, model)[0] from None
-    found = consistency_problems(record)
+        raise SeveralReadingsError(problems(error, model)) from None
+    found = consistency_problems(record) if isinstance(record, Fields) else []
     if found:
-        raise found[0]
+        raise SeveralReadingsError(found)
     return record
-
-
-def effective(member: Member, bay: Bay | None) -> Member:
-    """The member with its bay's fields filled in where it says nothing itself.
-
-    member, bay   records; None where the member names no bay
-    returns       Member; of spacing and tributary the member's own one stands
-    """
-    if bay is None:
-        return member
-    own = {name: getattr(member, name) for name in member.model_fields_set if getattr(member, name) is not None}
-    given = {name: getattr(bay, name) for name in bay.model_fields_set if getattr(bay, name) is not None}
-    if "spacing" in own or "tributary" in own:
-        given.pop("spacing", None)
-        given.pop("tributary", None)
-    return Member.model_construct(**(given | own))
 
 
 def to_json(record: Record) -> dict[str, Any]:

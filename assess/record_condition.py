@@ -9,9 +9,22 @@ from pydantic import ValidationInfo
 from assess import quantities as q
 from assess.errors import ReadingError
 from assess.reading import Reading
-from assess.record_fields import Record, Typed, choice, inlined, measured, nested, text, whole, written, yes_no
+from assess.record_fields import Record, Typed, choice, measured, text, whole, written, yes_no
+from assess.record_lists import each, inlined, nested, texts
 
+MOST_DEFECTS = 100
 FACES = ("top", "bottom", "left", "right", "side", "all")
+
+
+def _faces() -> Typed:
+    faces = texts(4, choice(*FACES))
+
+    def read(value: Any, info: ValidationInfo) -> Any:
+        if value in ([], ()):
+            raise ReadingError("", value, "1 to 4 faces of " + ", ".join(FACES), "is empty")
+        return faces.read(value, info)
+
+    return Typed(read, written, faces.schema | {"minItems": 1})
 
 
 class _Defect(Record):
@@ -66,7 +79,7 @@ class Checking(_Defect):
 class Char(_Defect):
     """Charred faces, scraped to a depth."""
 
-    faces: Annotated[tuple[str, ...], Typed(lambda v, i: _faces(v, i), written, {"type": "array"})]
+    faces: Annotated[tuple[str, ...], _faces()]
     at: Annotated[Reading, measured(q.POSITION)]
     length: Annotated[Reading, measured(q.LENGTH)]
     depth: Annotated[Reading, measured(q.SIZE)]
@@ -85,13 +98,6 @@ class HangerCorrosion(_Defect):
     """A hanger whose bearing is not relied on."""
 
     support: Annotated[int, whole(1, 6)]
-
-
-def _faces(value: Any, info: ValidationInfo) -> tuple[str, ...]:
-    if not isinstance(value, list | tuple) or not 1 <= len(value) <= 4:
-        raise ReadingError("", value, "a list of 1 to 4 faces of top, bottom, left, right, side, all")
-    face = choice(*FACES)
-    return tuple(face.read(item, info) for item in value)
 
 
 DEFECTS: dict[str, type[_Defect]] = {
@@ -113,24 +119,22 @@ def condition_field() -> Typed:
     """A field that holds the list of defects."""
     kind = choice(*DEFECTS)
 
+    def one(item: Any, info: ValidationInfo) -> Record:
+        if not isinstance(item, dict):
+            raise ReadingError("", item, "a defect: an object with `defect` and its fields")
+        try:
+            name = kind.read(item.get("defect"), info)
+        except ReadingError as error:
+            raise error.at("defect") from None
+        return nested(DEFECTS[name], item | {"defect": name}, info)
+
     def read(value: Any, info: ValidationInfo) -> tuple[Record, ...]:
-        if not isinstance(value, list | tuple):
-            raise ReadingError("", value, "a list of defects")
-        if len(value) > 100:
-            raise ReadingError("", f"{len(value)} defects", "at most 100 defects", "is too long")
-        found = []
-        for index, item in enumerate(value):
-            if not isinstance(item, dict):
-                raise ReadingError(str(index), item, "a defect: an object with `defect` and its fields")
-            try:
-                name = kind.read(item.get("defect"), info)
-            except ReadingError as error:
-                raise error.at(f"{index}.defect") from None
-            found.append(nested(DEFECTS[name], item | {"defect": name}, info, str(index)))
-        return tuple(found)
+        return each(value, MOST_DEFECTS, lambda item: one(item, info), "defects")
 
     models = list(dict.fromkeys(DEFECTS.values()))
-    return Typed(read, written, {"type": "array", "items": {"anyOf": [_schema(m) for m in models]}, "maxItems": 100})
+    return Typed(
+        read, written, {"type": "array", "items": {"anyOf": [_schema(m) for m in models]}, "maxItems": MOST_DEFECTS}
+    )
 
 
 def _schema(model: type[_Defect]) -> dict[str, Any]:

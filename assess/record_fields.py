@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import copy
-import difflib
 from collections.abc import Callable
 from typing import Any
 
@@ -12,15 +11,15 @@ from pydantic_core import CoreSchema, core_schema
 
 from assess.errors import ReadingError
 from assess.quantities import Quantity
-from assess.reading import Reading, parse
+from assess.reading import LONGEST, MOST_READINGS, Reading, parse
+from assess.record_errors import nearest_first
 
 LONGEST_TEXT = 10_000
-MANY = 12  # options; more are not listed beside the nearest
 READING_SCHEMA: dict[str, Any] = {
     "anyOf": [
-        {"type": "string", "minLength": 1, "maxLength": 200},
+        {"type": "string", "minLength": 1, "maxLength": LONGEST},
         {"type": "number"},
-        {"type": "array", "items": {"type": ["string", "number"]}, "minItems": 1, "maxItems": 50},
+        {"type": "array", "items": {"type": ["string", "number"]}, "minItems": 1, "maxItems": MOST_READINGS},
     ]
 }
 
@@ -73,29 +72,11 @@ def measured(quantity: Quantity) -> Typed:
     return Typed(lambda value, info: parse(value, quantity, session_units(info)), written, READING_SCHEMA)
 
 
-def several(quantity: Quantity, most: int) -> Typed:
-    """A field that holds a list of readings, one for each place."""
-
-    def read(value: Any, info: ValidationInfo) -> tuple[Reading, ...]:
-        if not isinstance(value, list | tuple) or not 1 <= len(value) <= most:
-            raise ReadingError("", value, f"a list of 1 to {most} readings; each {quantity.accepted}")
-        found = []
-        for index, item in enumerate(value):
-            try:
-                found.append(parse(item, quantity, session_units(info)))
-            except ReadingError as error:
-                raise error.at(str(index)) from None
-        return tuple(found)
-
-    schema = {"type": "array", "items": READING_SCHEMA, "minItems": 1, "maxItems": most}
-    return Typed(read, written, schema)
-
-
 def choice(*options: str) -> Typed:
     """A field that holds one of a few words, in any case."""
 
     def read(value: Any, info: ValidationInfo) -> str:
-        if isinstance(value, str):
+        if isinstance(value, str) and len(value) <= LONGEST:
             folded = " ".join(value.lower().split())
             for option in options:
                 if option.lower() == folded:
@@ -105,27 +86,12 @@ def choice(*options: str) -> Typed:
     return Typed(read, written, {"type": "string", "enum": list(options)})
 
 
-def nearest_first(value: object, options: tuple[str, ...]) -> str:
-    """The options in words, the nearest to what was typed named first.
-
-    >>> nearest_first("joyst", ("beam", "joist"))
-    'joist (nearest); one of beam, joist'
-    """
-    listed = "one of " + ", ".join(options) if len(options) > 1 else (options[0] if options else "nothing")
-    near = difflib.get_close_matches(str(value).lower()[:60], options, 1, 0.5) if isinstance(value, str) else []
-    if near and len(options) > MANY:
-        return f"{near[0]}"
-    return f"{near[0]} (nearest); {listed}" if near else listed
-
-
 def words_or_reading(quantity: Quantity, *options: str) -> Typed:
     """A field that holds one of a few words or a reading."""
     words = choice(*options)
 
     def read(value: Any, info: ValidationInfo) -> str | Reading:
-        if isinstance(value, str) and any(char.isdigit() for char in value):
-            return parse(value, quantity, session_units(info))
-        if isinstance(value, str):
+        if isinstance(value, str) and not any(char.isdigit() for char in value):
             try:
                 found: str = words.read(value, info)
                 return found
@@ -143,9 +109,7 @@ def text(longest: int = LONGEST_TEXT) -> Typed:
         if not isinstance(value, str):
             raise ReadingError("", value, "text")
         if len(value) > longest:
-            raise ReadingError("", value, f"text of at most {longest} characters", "is too long")
-        if any("\ud800" <= char <= "\udfff" for char in value):
-            raise ReadingError("", ascii(value), "text that can be written as UTF-8", "holds half a character")
+            raise ReadingError("", value[:LONGEST], f"text of at most {longest} characters", "is too long")
         return value
 
     return Typed(read, written, {"type": "string", "maxLength": longest})
@@ -182,41 +146,3 @@ def yes_no() -> Typed:
         return value
 
     return Typed(read, written, {"type": "boolean"})
-
-
-def records(model: type[Record], most: int) -> Typed:
-    """A field that holds a list of records."""
-
-    def read(value: Any, info: ValidationInfo) -> tuple[Record, ...]:
-        if not isinstance(value, list | tuple):
-            raise ReadingError("", value, "a list")
-        if len(value) > most:
-            raise ReadingError("", f"{len(value)} entries", f"at most {most} entries", "is too long")
-        return tuple(nested(model, item, info, str(index)) for index, item in enumerate(value))
-
-    return Typed(read, written, {"type": "array", "items": inlined(model), "maxItems": most})
-
-
-def inlined(model: type[BaseModel]) -> dict[str, Any]:
-    """JSON Schema of a record, in place."""
-    return model.model_json_schema(by_alias=True)
-
-
-def nested(model: type[Record], value: Any, info: ValidationInfo, at: str = "") -> Record:
-    """Read a record inside a record; its first problem is raised with its place."""
-    from pydantic import ValidationError
-
-    from assess.record_errors import problems
-
-    if not isinstance(value, dict):
-        raise ReadingError(at, value, "an object with " + ", ".join(field_names(model)))
-    try:
-        return model.model_validate(value, context=info.context)
-    except ValidationError as error:
-        first = problems(error, model)[0]
-        raise first.at(".".join(part for part in (at, first.field) if part)) from None
-
-
-def field_names(model: type[BaseModel]) -> tuple[str, ...]:
-    """Names of a record's fields as they stand in the file."""
-    return tuple(field.alias or name for name, field in model.model_fields.items())

@@ -10,19 +10,12 @@ from pydantic import BaseModel
 
 from assess.errors import ReadingError
 from assess.record import KINDS_OF_RECORD
-from assess.record_fields import field_names, nearest_first
-from assess.record_parts import (
-    Graded,
-    Hanger,
-    Levels,
-    Limits,
-    Size,
-    StandsFor,
-    StiffnessTest,
-    TypedUse,
-    TypedValues,
-    Wood,
-)
+from assess.record_errors import field_names, nearest_first
+from assess.record_lists import check_plain
+from assess.record_loads import Limits
+from assess.record_parts import Hanger, Size, StandsFor, TypedUse, TypedValues, Wood
+from assess.record_seen import Graded, Levels, StiffnessTest
+from assess.record_survey import Codes, SiteLimits, Tolerances
 
 # Records inside a record whose fields can be set one by one; lists are set whole.
 NESTED: dict[str, type[BaseModel]] = {
@@ -37,16 +30,24 @@ NESTED: dict[str, type[BaseModel]] = {
     "graded": Graded,
     "present_use": TypedUse,
     "proposed_use": TypedUse,
+    "tolerances": Tolerances,
+    "site_limits": SiteLimits,
+    "codes": Codes,
 }
 
-# Setting a field of one form takes away the fields of the others, in the same record.
-EXCLUSIVE: tuple[tuple[tuple[str, ...], ...], ...] = (
-    (("spacing",), ("tributary",)),
-    (("size.width", "size.depth"), ("size.diameter",), ("size.nominal", "size.dressing")),
+# Forms of which one excludes the others: setting a field that makes a form takes away all that belongs to its rivals.
+# Each is (fields that make it, fields that only go with it).
+EXCLUSIVE: tuple[tuple[tuple[tuple[str, ...], tuple[str, ...]], ...], ...] = (
+    ((("spacing",), ()), (("tributary",), ())),
     (
-        ("wood.species", "wood.grade", "wood.basis", "wood.stamp", "wood.rules"),
-        ("wood.candidates",),
-        ("wood.values", "wood.source"),
+        (("size.width", "size.depth"), ()),
+        (("size.diameter",), ()),
+        (("size.nominal",), ("size.dressing",)),
+    ),
+    (
+        (("wood.species", "wood.grade"), ("wood.basis", "wood.rules")),
+        (("wood.candidates",), ()),
+        (("wood.values",), ("wood.source",)),
     ),
 )
 
@@ -74,27 +75,26 @@ def apply_set(kind: str, data: dict[str, Any], path: object, value: Any) -> dict
     path    list of names, e.g. ['size', 'depth']
     value   raw value; None restores the default
     returns a new raw record, whose readings the caller still has to check
-    raises  ReadingError for a path that is not one of `allowed_paths`
+    raises  ReadingError for a path that is not one of `allowed_paths`, or leads through a single value
 
     >>> apply_set("member", {"spacing": "16 in"}, ["tributary"], "4 ft")
     {'tributary': '4 ft'}
     """
     dotted = _dotted(kind, path)
+    check_plain(value)
     made = copy.deepcopy(data)
     if value is not None:
         for rival in _rivals(dotted):
-            _remove(made, rival.split("."))
+            _remove(made, rival)
     *outer, last = dotted.split(".")
     if value is None:
-        _remove(made, dotted.split("."))
+        _remove(made, dotted)
         return made
     place = made
     for name in outer:
-        inner = place.setdefault(name, {})
-        if not isinstance(inner, dict):
-            # A use by name, or one sag reading, gives way to the object whose field is set.
-            inner = place[name] = {}
-        place = inner
+        place = place.setdefault(name, {})
+        if not isinstance(place, dict):
+            raise _through(dotted, name)
     place[last] = copy.deepcopy(value)
     return made
 
@@ -112,22 +112,28 @@ def _dotted(kind: str, path: object) -> str:
 
 
 def _rivals(dotted: str) -> list[str]:
-    found = []
+    """What goes when a field is set."""
     for forms in EXCLUSIVE:
-        if any(dotted == name or dotted.startswith(name + ".") for form in forms for name in form):
-            mine = next(f for f in forms if any(dotted == name or dotted.startswith(name + ".") for name in f))
-            found += [name for form in forms if form is not mine for name in form]
-    return found
+        for form in forms:
+            if any(dotted == name or dotted.startswith(name + ".") for name in form[0]):
+                return [name for makes, goes in forms if makes != form[0] for name in (*makes, *goes)]
+    return []
 
 
-def _remove(data: dict[str, Any], names: list[str]) -> None:
-    """Take a field away, and an object that it leaves empty."""
-    first, *rest = names
-    if not rest:
-        data.pop(first, None)
-        return
-    inner = data.get(first)
-    if isinstance(inner, dict):
-        _remove(inner, rest)
+def _remove(data: dict[str, Any], dotted: str) -> None:
+    """Take a field away, and the objects that it leaves empty."""
+    *outer, last = dotted.split(".")
+    places = [data]
+    for name in outer:
+        inner = places[-1].get(name, {})
+        if not isinstance(inner, dict):
+            raise _through(dotted, name)
+        places.append(inner)
+    places[-1].pop(last, None)
+    for place, name, inner in reversed(list(zip(places, outer, places[1:], strict=False))):
         if not inner:
-            del data[first]
+            place.pop(name, None)
+
+
+def _through(dotted: str, name: str) -> ReadingError:
+    return ReadingError("path", dotted, f"{name} set whole, which is no object here", "leads through a single value")

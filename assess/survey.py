@@ -11,7 +11,8 @@ from assess.errors import ReadingError
 from assess.finding import BASIS, Finding
 from assess.log.fold import State, fold
 from assess.log.read import Problem, SessionFile, problem_of
-from assess.record import Member, effective, read_bay, read_member
+from assess.record import Member, read_bay, read_member
+from assess.record_effective import effective
 from assess.whole import assess
 from assess.working import Line as Step
 
