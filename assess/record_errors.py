@@ -9,7 +9,7 @@ from pydantic import BaseModel, ValidationError
 
 from assess.errors import ReadingError
 
-MANY = 12  # options; more are not listed beside the nearest
+MANY = 12  # options; of more, the nearest alone is named, or the first ones
 
 
 class SeveralReadingsError(ReadingError):
@@ -19,7 +19,7 @@ class SeveralReadingsError(ReadingError):
     """
 
     def __init__(self, errors: Iterable[ReadingError]) -> None:
-        self.errors = tuple(errors)
+        self.errors = tuple(one for error in errors for one in listed(error))
         first = self.errors[0]
         super().__init__(first.field, first.value, first.accepted, first.problem)
 
@@ -76,8 +76,10 @@ def nearest_first(value: object, options: tuple[str, ...]) -> str:
     >>> nearest_first("joyst", ("beam", "joist"))
     'joist (nearest); one of beam, joist'
     """
-    words = "one of " + ", ".join(options) if len(options) > 1 else (options[0] if options else "nothing")
     near = difflib.get_close_matches(str(value).lower()[:60], options, 1, 0.5) if isinstance(value, str) else []
-    if not near:
-        return words
-    return f"{near[0]} (nearest)" if len(options) > MANY else f"{near[0]} (nearest); {words}"
+    if near and len(options) > MANY:
+        return f"{near[0]} (nearest)"
+    words = ("one of " if len(options) > 1 else "") + ", ".join(options[:MANY])
+    if len(options) > MANY:
+        words += f" and {len(options) - MANY} more"
+    return f"{near[0]} (nearest); {words}" if near else words

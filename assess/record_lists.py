@@ -123,7 +123,9 @@ def check_plain(data: object) -> None:
         place, value, depth = left.pop()
         count += 1
         if count > MOST_VALUES or depth > DEEPEST:
-            raise ReadingError(place, "too much", f"at most {MOST_VALUES} values, {DEEPEST} deep", "is too large")
+            raise ReadingError(
+                place.split(".")[0], "too much", f"at most {MOST_VALUES} values, {DEEPEST} deep", "is too large"
+            )
         if isinstance(value, dict):
             for name, item in value.items():
                 if not isinstance(name, str):

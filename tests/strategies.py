@@ -53,7 +53,7 @@ def members(draw: Draw, units: str = "US") -> Data:
     kind = draw(st.sampled_from(("joist", "joist", "beam", "header", "rafter", "ceiling joist", "deck joist")))
     size, breadth, depth = _size(draw, read)
     count = draw(st.sampled_from((1, 1, 1, 2, 3, 5)))
-    spans = [min(max(depth * some(6, 24), 24), 700) for _ in range(count)]
+    spans = [min(max(depth * some(5, 22), 24), 700) for _ in range(count)]
     data: Data = {
         "kind": kind,
         "size": size,
@@ -62,7 +62,7 @@ def members(draw: Draw, units: str = "US") -> Data:
         "dead": _dead(draw, read, some),
     }
     if kind in ("beam", "header"):
-        data["tributary"] = read(some(36, 160), q.TRIBUTARY)
+        data["tributary"] = read(some(24, 96), q.TRIBUTARY)
     else:
         data["spacing"] = read(draw(st.sampled_from((12, 16, 19.1875, 24))), q.SPACING)
     data |= _uses(draw, read, some, kind)
@@ -108,7 +108,7 @@ def members(draw: Draw, units: str = "US") -> Data:
             "load": read(some(100, 600), q.WEIGHT), "at": read(place(), q.POSITION),
             "deflection": read(some(0.0625, 0.5), q.DEFLECTION), "carried_by": draw(st.integers(1, 5)),
         },
-        "hold_down": lambda: sorted(draw(st.sets(st.integers(1, count + 1)))),
+        "hold_down": lambda: draw(st.sampled_from((list(range(1, count + 2)), [count + 1], []))),
         "photos": lambda: draw(st.lists(st.sampled_from(("n07.jpg", "../x.jpg", "inv\u202egpj.exe")), max_size=3)),
         "remarks": lambda: draw(free_texts()),
         "not_seen": lambda: draw(st.lists(free_texts(), max_size=3)),
@@ -195,9 +195,9 @@ def _uses(draw: Draw, read: Any, some: Any, kind: str) -> Data:
     }
     use = st.one_of(st.sampled_from(USES), st.just(by_loads))
     if kind == "rafter":
-        roof: Data = {"snow": read(some(10, 70), q.AREA_LOAD), "slope": read(some(5, 45), q.SLOPE, True)}
-        if draw(st.booleans()):
-            roof["roof_live"] = read(20, q.AREA_LOAD)
+        names = draw(st.sampled_from((("snow",), ("roof_live",), ("snow", "roof_live"))))
+        roof: Data = {name: read(some(10, 60), q.AREA_LOAD) for name in names}
+        roof["slope"] = read(some(5, 45), q.SLOPE, True)
         return roof
     found = {"proposed_use": draw(use)}
     if draw(st.booleans()):
