@@ -9,10 +9,12 @@ if TYPE_CHECKING:
     from assess.record import Member as Member
     from assess.whole import assess as assess
     from assess.whole import explain as explain
+    from assess.whole import study as study
 
 _HOMES = {
     "assess": "assess.whole",
     "explain": "assess.whole",
+    "study": "assess.whole",
     "Member": "assess.record",
     "Finding": "assess.finding",
 }

@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from numpy import sqrt
+
+from math import sqrt
 
 from assess.trace import formula
 

@@ -132,8 +132,6 @@ def _supports(
     assert member.spans is not None
     count = len(member.spans) + 1
     given = [reading.value for reading in member.bearing or ()]
-    if len(given) == 1:
-        given = given * count
     measured = tuple(i < len(given) for i in range(count))
     bearing = tuple(given[i] if i < len(given) else BEARING_IN for i in range(count))
     if not all(measured):

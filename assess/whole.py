@@ -8,6 +8,7 @@ from assess.engine import compute
 from assess.finding import Finding
 from assess.judge import judge
 from assess.pieces import split, worst
+from assess.profile import profile
 from assess.record import Member
 from assess.resolve import resolve
 from assess.scenario import Scenario
@@ -27,6 +28,21 @@ def assess(member: Member) -> Finding:
     if scenario.separate:
         return worst([(start, judge(piece, compute(piece))) for start, piece in split(scenario)])
     return judge(scenario, compute(scenario))
+
+
+def study(member: Member, stretches: int) -> tuple[Finding, tuple[float, ...]]:
+    """The finding of a member and its utilisation along the length, out of one computation, for the drawing.
+
+    member      as for `assess`
+    stretches   in how many equal stretches the length is divided
+    returns     (Finding, worst ratio in each stretch); of separate pieces no utilisation
+    raises      ReadingError as `assess` does
+    """
+    scenario = resolve(member)
+    if scenario.separate:
+        return assess(member), ()
+    computed = compute(scenario)
+    return judge(scenario, computed), profile(computed, stretches)
 
 
 def explain(member: Member) -> tuple[Finding, list[Line]]:
