@@ -209,7 +209,8 @@ def _edge(draw: Draw, read: Any, place: Any) -> Any:
     form = draw(st.integers(0, 3))
     if form < 2:
         return ("held", "ends only")[form]
-    return read(48, q.SPAN) if form == 2 else [read(place(), q.POSITION) for _ in range(2)]
+    # Of an edge a list is of places, never of several readings of one distance.
+    return read(48, q.SPAN, True) if form == 2 else [read(place(), q.POSITION) for _ in range(2)]
 
 
 def _point(draw: Draw, read: Any, some: Any, place: Any) -> Data:

@@ -96,7 +96,7 @@ def test_more_live_load_never_lowers_the_ratio(
 
 # Widths of one size class of dimension lumber, 2 in thick (NDS Supplement 2018 Table 4A: one CF for each class).
 SAME_CLASS = ((7.25, 7.5), (9.25, 9.5), (9.25, 10.0), (11.25, 11.75))
-# A place on the face means another thing in a deeper piece; the weight of a deeper one takes from what is left to carry.
+# A place on the face means another thing in a deeper piece, and its own weight takes from what it can carry.
 SOUND = {"condition": [], "own_weight": "included"}
 
 
