@@ -11,6 +11,7 @@ from numpy.typing import NDArray
 from assess import adjust
 from assess.adjust import Factors
 from assess.combinations import CONCENTRATED
+from assess.effects import relief_allowed
 from assess.envelope import Envelope, note_sum
 from assess.mesh import Mesh
 from assess.scenario import Scenario
@@ -119,9 +120,10 @@ def finish(
     """
     worst = ratio.argmax(axis=2)
     high = ratio.max(axis=2)
+    # Where the load does nothing, room over nought is endless, or, overused already, minus endless; 0/0 says nothing.
     with np.errstate(divide="ignore", invalid="ignore"):
-        sizes = np.where(per_unit > 0.0, room / per_unit, np.where(room < 0.0, -np.inf, np.inf))
-    greatest = np.maximum(sizes.min(axis=2), 0.0)
+        greatest = np.maximum(np.fmin.reduce(room / np.abs(per_unit), axis=2), 0.0)
+    greatest[np.isnan(greatest)] = np.inf
     if none is not None:
         high, greatest = np.full_like(high, np.inf), np.zeros_like(greatest)
     return Checked(name, unit, clause, scope, names, high, worst, greatest, demand, capacity, at_in, factors, none)
@@ -148,10 +150,10 @@ def bending(
     star = adjust.Fb_star.on(trace, part.wood("Fb").reshape(shape), env.CD, f.CM_Fb, f.Ct, CF, f.Ci, f.Cr)
     # A station between two segments is checked with the lesser of their sections.
     S_segment = np.minimum(section.S_top, section.S_bot)
-    S = np.minimum(
-        np.concatenate([S_segment[:, :1], S_segment], axis=1),
-        np.concatenate([S_segment, S_segment[:, -1:]], axis=1),
-    )[:, None, :]
+    if S_segment.shape[1] > 1:
+        first, last = S_segment[:, :1], S_segment[:, -1:]
+        S_segment = np.minimum(np.concatenate([first, S_segment], axis=1), np.concatenate([S_segment, last], axis=1))
+    S = S_segment[:, None, :]
     M = env.layout.M
     found = []
     uniform = uniform_only(scenario, env)
@@ -220,8 +222,8 @@ def shear(
     trace: Trace | None = None,
 ) -> Checked:
     """Shear at both ends of every segment (NDS 3.4), relieved near supports where 3.4.3.1 allows it."""
-    relief = scenario.loaded_on_top and scenario.bearing_on != "hanger"
-    V = env.layout.V_relieved if relief else env.layout.V
+    relief = relief_allowed(scenario)
+    V = env.layout.V
     if trace is not None:
         trace.scope = "shear"
         where = "loads within d of a support's face left out (3.4.3.1)" if relief else "every load counted"
@@ -231,24 +233,28 @@ def shear(
     shape = (rows.count, 1, 1)
     value = adjust.Fv_prime.on(trace, part.wood("Fv").reshape(shape), env.CD, f.CM_Fv, f.Ct, f.Ci)
     if part.round:
-        area = np.concatenate([section.A, section.A], axis=1)[:, None, :]
+        area = _both_ends(section.A)
         demand = shear_stress_round.on(trace, force, area)
         capacity = value * area * 0.75
     else:
-        b = np.concatenate([section.b_net, section.b_net], axis=1)[:, None, :]
-        d = np.concatenate([section.d_net, section.d_net], axis=1)[:, None, :]
+        b, d = _both_ends(section.b_net), _both_ends(section.d_net)
         demand = shear_stress.on(trace, force, b, d)
         capacity = value * b * d / 1.5
     ratio = demand / value
     # Both signs have their own room; the lesser greatest load of the two stands.
     room = np.concatenate([capacity - env.base_high[:, :, V], capacity + env.base_low[:, :, V]], axis=2)
-    per_unit = np.concatenate([env.unit_high[:, :, V], -env.unit_low[:, :, V]], axis=2)
+    per_unit = np.concatenate([env.unit_high[:, :, V], env.unit_low[:, :, V]], axis=2)
     factors = {"CD": env.CD, "CM": f.CM_Fv, "Ct": f.Ct, "Ci": f.Ci}
     at = np.concatenate([mesh.x[:, :-1], mesh.x[:, 1:]], axis=1)
     return finish(
         "shear", "psi", "NDS 3.4.2, 3.4.3.1" if relief else "NDS 3.4.2", "shear", names(env),
         ratio, room, per_unit, demand, value, at, factors, f.none,
     )  # fmt: skip
+
+
+def _both_ends(values: Array) -> Array:
+    """Values of segments at both ends of each [K, 1, 2(N-1)], or [K, 1, 1] where they are the same all along."""
+    return (np.concatenate([values, values], axis=1) if values.shape[1] > 1 else values)[:, None, :]
 
 
 def bearing(
@@ -304,6 +310,8 @@ def uplift(scenario: Scenario, rows: Rows, env: Envelope, mesh: Mesh, trace: Tra
     dead = env.effects.sums["dead"][0][:, None, R]
     factors_dead = np.array([c.of("dead") for c in env.combinations]).reshape(1, -1, 1)
     low = env.low(R) - factors_dead * dead
+    if not bool((low < 0.0).any()):
+        return None
     low[:, :, scenario.hold_down] = 0.0  # held down by what is recorded there
     if not bool((low < 0.0).any()):
         return None

@@ -30,7 +30,10 @@ class Combination:
 
     def of(self, load_type: str) -> float:
         """Coefficient of the load type, 0 where it takes no part."""
-        return dict(self.coefficients).get(load_type, 0.0)
+        for kind, factor in self.coefficients:
+            if kind == load_type:
+                return factor
+        return 0.0
 
 
 # Combination 6 of ASCE 7-16 2.4.1 carries 0.75(0.6W); the construction row is ASCE 37 practice, without L.

@@ -18,7 +18,7 @@ Pair = tuple[Array, Array]  # the highest and the lowest over patterns
 
 @dataclass(frozen=True)
 class Layout:
-    """Where each effect stands in the last axis: moment, shear (full and relieved), reaction, deflection.
+    """Where each effect stands in the last axis: moment, shear, reaction, deflection.
 
     Shear is given at both ends of each segment: first all left ends, then all right ends.
     """
@@ -33,24 +33,19 @@ class Layout:
 
     @property
     def V(self) -> slice:
-        """Shear at the ends of each segment [lb], every load counted."""
+        """Shear at the ends of each segment [lb], relieved near supports where NDS 3.4.3.1 allows it."""
         return slice(self.stations, 3 * self.stations - 2)
-
-    @property
-    def V_relieved(self) -> slice:
-        """The same with loads near the supports left out (NDS 3.4.3.1)."""
-        return slice(3 * self.stations - 2, 5 * self.stations - 4)
 
     @property
     def R(self) -> slice:
         """Reaction at each support [lb], upward positive."""
-        start = 5 * self.stations - 4
+        start = 3 * self.stations - 2
         return slice(start, start + self.supports)
 
     @property
     def y(self) -> slice:
         """Deflection at each station [in], downward positive."""
-        start = 5 * self.stations - 4 + self.supports
+        start = 3 * self.stations - 2 + self.supports
         return slice(start, start + self.stations)
 
 
@@ -82,25 +77,28 @@ def effects(scenario: Scenario, rows: Rows, mesh: Mesh, stage: Stage, EI: Array,
     w, P = _cases(scenario, mesh, K, N)
     statics = solve(mesh.x, EI, mesh.supports, w, P)
     layout = Layout(N, mesh.supports.shape[1])
-    relief = _relief(mesh)
+    relief = _relief(mesh, relief_allowed(scenario))
     # The places of the concentrated load come last; they are enveloped at once and need no deflection.
     few = w.shape[1] - len(mesh.patches)
     V = np.concatenate([statics.V_right[:, :few, :-1], statics.V_left[:, :few, 1:]], axis=2)
     V_relieved = relief.apply(V)
-    for number, point in enumerate(scenario.point_loads):
-        case = mesh.lengths + number
-        V_relieved[:, case] = V[:, case] * _point_relief(mesh, rows, point.at_in) * relief.solid
-    unit_effects = np.concatenate([statics.M[:, :few], V, V_relieved, statics.R[:, :few], statics.y[:, :few]], axis=2)
+    if relief.allowed:
+        for number, point in enumerate(scenario.point_loads):
+            case = mesh.lengths + number
+            V_relieved[:, case] = V[:, case] * _point_relief(mesh, rows, point.at_in) * relief.solid
+    unit_effects = np.concatenate([statics.M[:, :few], V_relieved, statics.R[:, :few], statics.y[:, :few]], axis=2)
 
     lengths = unit_effects[:, : mesh.lengths]
-    zero = np.zeros_like(lengths)
-    unit = (np.maximum(lengths, zero).sum(axis=1), np.minimum(lengths, zero).sum(axis=1))
+    together = lengths.sum(axis=1) if mesh.lengths > 1 else lengths[:, 0]
+    unit = (np.maximum(lengths, 0.0).sum(axis=1), np.minimum(lengths, 0.0).sum(axis=1))
     if not stage.later:
         unit = (0.0 * unit[0], 0.0 * unit[1])
     sums: dict[str, Pair] = {}
     width = rows.tributary_in[:, None] / 144.0  # psf -> lb/in of member
-    dead = lengths.sum(axis=1) * (rows.dead_psf[:, None] * width + own_pli[:, None])
-    sums["dead"] = (dead * stage.dead, dead * stage.dead)
+    dead = together * (rows.dead_psf[:, None] * width + own_pli[:, None])
+    if stage.dead != 1.0:
+        dead = dead * stage.dead
+    sums["dead"] = (dead, dead)
     for load_type, psf in (
         ("other live", rows.partition_psf),
         ("snow", np.full(K, scenario.snow_psf)),
@@ -171,24 +169,36 @@ class Relief:
 
     source   for each shear entry [K, 2(N-1)], the entry it takes its value from: the far end of its zone
     solid    1 for entries of segments that have a length, 0 for the rest: where stations coincide nothing is checked
+    allowed  False where the clause does not apply: then every load is counted
     """
 
     source: Index
     solid: Array
+    allowed: bool
 
     def apply(self, V: Array) -> Array:
-        """Relieved shear of [K, C, 2(N-1)] or [K, 2(N-1)]."""
-        if len(self.source) == 1:
-            taken: Array = V[..., self.source[0]] * self.solid[0]
-            return taken
+        """Relieved shear of [K, C, 2(N-1)] or [K, 2(N-1)]; as it is where no relief is allowed."""
+        if not self.allowed:
+            return V
+        k = np.arange(len(self.source))[:, None]
         if V.ndim == 2:
-            return np.take_along_axis(V, self.source, axis=1) * self.solid
-        return np.take_along_axis(V, self.source[:, None, :], axis=2) * self.solid[:, None, :]
+            taken: Array = V[k, self.source] * self.solid
+            return taken
+        cases = np.arange(V.shape[1])[:, None]
+        return V[k[:, :, None], cases, self.source[:, None, :]] * self.solid[:, None, :]
 
 
-def _relief(mesh: Mesh) -> Relief:
+def relief_allowed(scenario: Scenario) -> bool:
+    """Whether the member bears on its bottom and is loaded on its top (NDS 3.4.3.1)."""
+    return scenario.loaded_on_top and scenario.bearing_on != "hanger"
+
+
+def _relief(mesh: Mesh, allowed: bool) -> Relief:
     K, N1 = mesh.mid.shape
-    source = np.tile(np.arange(2 * N1), (K, 1))
+    if not allowed:
+        return Relief(np.zeros((K, 0), dtype=np.intp), np.ones((K, 1)), False)
+    source = np.empty((K, 2 * N1), dtype=np.intp)
+    source[:] = np.arange(2 * N1)
     k = np.arange(K)
     for zone in mesh.zones:
         at, end = mesh.x[k, mesh.supports[:, zone.support]], mesh.x[k, zone.end]
@@ -196,10 +206,10 @@ def _relief(mesh: Mesh) -> Relief:
         inside = (mesh.mid > low) & (mesh.mid < high)
         # Just before the far end, coming from the support: a load standing at d itself is outside the zone.
         entry = (N1 + zone.end - 1 if zone.side > 0 else zone.end)[:, None]
-        source[:, :N1] = np.where(inside, entry, source[:, :N1])
-        source[:, N1:] = np.where(inside, entry, source[:, N1:])
+        for half in (source[:, :N1], source[:, N1:]):
+            np.copyto(half, entry, where=inside)
     solid = (mesh.x[:, 1:] > mesh.x[:, :-1]).astype(float)
-    return Relief(source, np.concatenate([solid, solid], axis=1))
+    return Relief(source, np.concatenate([solid, solid], axis=1), True)
 
 
 def _point_relief(mesh: Mesh, rows: Rows, at_in: float) -> Array:
@@ -228,7 +238,7 @@ def _patch_placed(statics: Statics, first: int, relief: Relief, P_lb: Array) -> 
         right, left = reduce(statics.V_right[:, first:], axis=1), reduce(statics.V_left[:, first:], axis=1)
         V = np.concatenate([right[:, :-1], left[:, 1:]], axis=1)
         # Relief follows the shear at the end of the zone, where the patch stands at d from the face.
-        parts = [M, V, relief.apply(V), R, np.zeros_like(M)]
+        parts = [M, relief.apply(V), R, np.zeros_like(M)]
         clipped: Array = clip(np.concatenate(parts, axis=1), 0.0) * P_lb
         return clipped
 
@@ -247,15 +257,13 @@ def _patch_on_simple_span(mesh: Mesh, layout: Layout, relief: Relief, P_lb: Arra
     c = np.minimum(along_in, L)
     M = P_lb * x * (L - x) / L**2 * (L - c / 2)
     ends = np.concatenate([x[:, :-1], x[:, 1:]], axis=1)
-    high = np.maximum(_patch_shear(ends, L, c, P_lb), 0.0)
-    low = np.minimum(-_patch_shear(L - ends, L, c, P_lb), 0.0)
-    R = np.broadcast_to(P_lb * (1.0 - c / (2 * L)), (K, layout.supports))
-    y = np.zeros_like(x)  # deflection limits are checked under the uniform load
-    zero_M, zero_R = np.zeros_like(M), np.zeros(R.shape)
-    return (
-        np.concatenate([M, high, relief.apply(high), R, y], axis=1),
-        np.concatenate([zero_M, low, relief.apply(low), zero_R, y], axis=1),
-    )
+    # Deflection limits are checked under the uniform load: y stays nought.
+    high, low = np.zeros((2, K, layout.y.stop))
+    high[:, layout.M] = M
+    high[:, layout.R] = P_lb * (1.0 - c / (2 * L))
+    high[:, layout.V] = relief.apply(np.maximum(_patch_shear(ends, L, c, P_lb), 0.0))
+    low[:, layout.V] = relief.apply(np.minimum(-_patch_shear(L - ends, L, c, P_lb), 0.0))
+    return high, low
 
 
 def _patch_shear(x: Array, L: Array, c: Array, P_lb: Array) -> Array:

@@ -52,7 +52,8 @@ def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
     f = adjust.factors(scenario, rows, part, trace)
     E = [stiffness(part, f, trace)]
     E += [stiffness(piece, adjust.factors(scenario, rows, piece)) for piece in rows.parts[1:]]
-    EI = [E[index][:, None] * section.I for index, section in enumerate(left)]
+    shape = stations.mid.shape
+    EI = [np.broadcast_to(E[index][:, None] * section.I, shape) for index, section in enumerate(left)]
     loads = on_part(0, scenario, rows, stations, EI, own)
     env = envelope(scenario, rows, loads)
     strength = [
@@ -101,13 +102,13 @@ def net(scenario: Scenario | None, part: PartRows, stations: Mesh) -> Section:
 
     scenario   whose losses the part has; None for a part that has none
     """
+    if scenario is None or not scenario.losses:
+        return gross(part)  # one value for all segments
     b, d = part.breadth_in[:, None], part.depth_in[:, None]
     shape = stations.mid.shape
-    if part.round:
-        return circle(np.broadcast_to(d, shape))
     top, bottom, side = np.zeros(shape), np.zeros(shape), np.zeros(shape)
     holes = []
-    for loss in scenario.losses if scenario is not None else ():
+    for loss in scenario.losses:
         inside = (stations.mid > loss.from_in) & (stations.mid < loss.to_in)
         top = np.maximum(top, inside * loss.top_in)
         bottom = np.maximum(bottom, inside * loss.bottom_in)

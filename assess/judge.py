@@ -189,10 +189,8 @@ def _check(checked: Checked, row: int, combination: int) -> Check:
     place = int(checked.worst[row, combination])
 
     def pick(values: Array) -> float:
-        if values.size == 1:
-            return float(values.item())
-        index = tuple(min(i, size - 1) for i, size in zip((row, combination, place), values.shape, strict=True))
-        return float(values[index])
+        K, C, n = values.shape
+        return float(values[row if K > 1 else 0, combination if C > 1 else 0, place if n > 1 else 0])
 
     none = checked.governs_none is not None
     return Check(

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-
 from math import sqrt
 
 from assess.trace import formula

@@ -126,7 +126,7 @@ def deflection(
         found.append(
             finish(
                 name, "in", clause, name, names, demand / limit, room, per_unit, demand,
-                np.broadcast_to(limit, demand.shape), mesh.x, {},
+                limit, mesh.x, {},
             )
         )  # fmt: skip
     return found[0], found[1]
@@ -137,7 +137,7 @@ def _stands(sums: dict[str, tuple[Array, Array]], load_type: str) -> bool:
 
 
 def _sum(sums: dict[str, tuple[Array, Array]], row: dict[str, float], asked: str, y: slice, side: int) -> Array:
-    total = np.zeros_like(sums["dead"][0][:, y])
+    total = 0.0 * sums["dead"][0][:, y]
     for load_type, factor in row.items():
         if load_type == "live" and "other live" in sums:
             total = total + factor * sums["other live"][side][:, y]

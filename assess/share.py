@@ -37,7 +37,7 @@ def taken(effects: Effects, share: Array) -> Effects:
     )
     both_ends = np.concatenate([share, share], axis=1)
     K, S = share.shape[0], layout.supports
-    factor = np.concatenate([at_station, both_ends, both_ends, np.ones((K, S)), np.ones_like(at_station)], axis=1)
+    factor = np.concatenate([at_station, both_ends, np.ones((K, S)), np.ones_like(at_station)], axis=1)
 
     def scaled(pair: Pair) -> Pair:
         return pair[0] * factor, pair[1] * factor

@@ -74,10 +74,10 @@ def variants(scenario: Scenario) -> Rows:
     repeats = K // judged
 
     def column(value: float) -> Array:
-        return np.full(K, value)
+        return np.array((value,) * K)
 
     def table(values: tuple[float, ...]) -> Array:
-        return np.tile(np.array(values), (K, 1))
+        return np.array((values,) * K)
 
     parts = tuple(
         PartRows(

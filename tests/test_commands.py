@@ -88,7 +88,9 @@ def test_json_has_every_key_of_the_interface(tmp_path: Path, capsys: pytest.Capt
     assert {("bending", "D"), ("bending", "D+L"), ("shear", "D+L"), ("bearing", "D+L"), ("live deflection", "L"),
             ("total deflection", "1.5D+L"), ("bounce", "frequency"), ("bounce", "1 kN")} <= names  # fmt: skip
     for check in member["checks"]:
-        assert {"check", "combination", "at_in", "demand", "capacity", "unit", "ratio", "clause", "factors"} == set(check)
+        assert {"check", "combination", "at_in", "demand", "capacity", "unit", "ratio", "clause", "factors"} == set(
+            check
+        )
     # the published span table allows 15 ft 2 in for this joist, so at 12 ft it carries more than 40 psf
     assert member["live_load"]["strength_psf"] > 40
 
@@ -262,7 +264,13 @@ def test_a_hostile_folder_runs_nothing(tmp_path: Path) -> None:
 
 def test_plain_output_where_the_terminal_can_do_little() -> None:
     program = Path(sys.executable).parent / "willcarry"
-    surroundings = {"PATH": os.environ["PATH"], "LANG": "C", "PYTHONIOENCODING": "ascii", "TERM": "dumb", "NO_COLOR": "1"}
+    surroundings = {
+        "PATH": os.environ["PATH"],
+        "LANG": "C",
+        "PYTHONIOENCODING": "ascii",
+        "TERM": "dumb",
+        "NO_COLOR": "1",
+    }
     done = subprocess.run(
         [str(program), "demo", "--print"], capture_output=True, env=surroundings, timeout=30, check=False
     )
