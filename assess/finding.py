@@ -55,14 +55,21 @@ class LiveLoad:
 class ChangeOfUse:
     """Demand over capacity under the present and the proposed use, both with the capacity as found.
 
-    increase   proposed_ratio / present_ratio - 1; None where either does not exist
-    excused    whether the increase is at most 5 % (IEBC 2021 506.5.1, 1006.1): never a statement that it is adequate
+    increase         by effect: proposed_ratio / present_ratio - 1; None where either does not exist
+    excused          whether that is at most 5 % (IEBC 2021 506.5.1, 1006.1): never a statement that it is adequate
+    live_increase    by load type: proposed over present live load - 1, partitions included; None where there was none
+    alteration       whether an alteration triggers a full check (IEBC 2021 503.3, 805.2): design live load up by more
+                     than 5 %, or capacity reduced by the planned work, which has no tolerance
+    rule             code edition and the reading of the rule that was used
     """
 
     present_ratio: float | None
     proposed_ratio: float | None
     increase: float | None
     excused: bool | None
+    live_increase: float | None
+    alteration: bool
+    rule: str
 
 
 @dataclass(frozen=True)

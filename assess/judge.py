@@ -16,7 +16,10 @@ from assess.service import LEAST_FREQUENCY_HZ
 from assess.trace import Array
 
 POSTING_STEP_PSF = 5.0
-EXCUSED_INCREASE = 0.05  # IEBC 2021 506.5.1
+EXCUSED_INCREASE = 0.05  # IEBC 2021 506.5.1, 503.3
+CHANGE_RULE = (
+    "IEBC 2021 506.5.1 and 1006.1 by effect (ratio over ratio); 503.3 and 805.2 by load type; clauses recalled"
+)
 
 
 def judge(scenario: Scenario, computed: Computed) -> Finding:
@@ -93,14 +96,24 @@ def worst_row(computed: Computed) -> int:
 
 
 def _change_of_use(scenario: Scenario, by_row: Array, row: int, judged: int) -> ChangeOfUse | None:
-    """Both ratios of the governing candidate, and whether the change is within 5 % (IEBC 2021 506.5.1, 1006.1)."""
-    if len(by_row) == judged or scenario.present is None:
+    """Both ratios of the governing candidate, the increase by effect and by load type, and what the code says."""
+    if len(by_row) == judged or scenario.present is None or scenario.live is None:
         return None
     proposed, present = finite(float(by_row[row])), finite(float(by_row[row + judged]))
-    if proposed is None or present is None or present <= 0.0:
-        return ChangeOfUse(present, proposed, None, None)
-    increase = proposed / present - 1.0
-    return ChangeOfUse(present, proposed, increase, increase <= EXCUSED_INCREASE)
+    before = scenario.present.live_psf + scenario.present.partition_psf
+    after = scenario.live.live_psf + scenario.live.partition_psf
+    live_increase = after / before - 1.0 if before > 0.0 else None
+    grown = (live_increase is None and after > 0.0) or (live_increase is not None and live_increase > EXCUSED_INCREASE)
+    increase = proposed / present - 1.0 if proposed is not None and present else None
+    return ChangeOfUse(
+        present_ratio=present,
+        proposed_ratio=proposed,
+        increase=increase,
+        excused=None if increase is None else increase <= EXCUSED_INCREASE and not scenario.new_work,
+        live_increase=live_increase,
+        alteration=grown or scenario.new_work,
+        rule=CHANGE_RULE,
+    )
 
 
 def _verdict(by_row: Array, pending: bool) -> str:

@@ -12,8 +12,19 @@ from assess.resolve_wood import resolve_wood
 from assess.scenario import Edge, Part, Scenario, Stage
 from assess.weight import DRY_PERCENT, WET_PERCENT
 from species import WoodError, dressed_size
+from species.sizes import nominal_size
 
 SEAT_HALF_IN = 0.75  # half of 1 1/2 in of bearing, added to a clear span at each end
+LEAST_BEARING_IN = {"wood": 1.5, "hanger": 1.5, "masonry": 3.0}  # IRC R502.6
+# NDS 4.4.1.2, tiers recalled: greatest nominal depth over breadth, and how such a member is to be held.
+DEPTH_RULES = (
+    (2.0, "no bracing is asked for"),
+    (4.0, "ends held against rotation"),
+    (5.0, "ends held, compression edge held along its length"),
+    (6.0, "ends held, compression edge held, and bridging or blocking at 8 ft or less"),
+    (7.0, "ends held, both edges held along their length"),
+    (float("inf"), "no rule covers it"),
+)
 BEARING_IN = 1.5  # taken where no bearing was measured
 WET_ABOVE_PERCENT = 19.0  # NDS Supplement: wet service above 19 % for an extended time
 
@@ -46,6 +57,8 @@ def resolve(member: Member) -> Scenario:
         notes.append("three or more alike share the floor (default for this kind)")
     top = _edge(member.top_edge, kind.top_held, "top", notes)
     bottom = _edge(member.bottom_edge, False, "bottom", notes)
+    if not is_round and depth_in > ply_in:
+        notes.append(_depth_rule(ply_in, depth_in))
     if member.ends_held is None:
         notes.append("ends held against rotation (default)")
     on_top = kind.loaded_on_top if member.loaded_on is None else member.loaded_on == "top"
@@ -101,8 +114,9 @@ def resolve(member: Member) -> Scenario:
         limit_total=limit_total,
         losses=(),
         assumptions=(*wood.assumptions, *notes, *loads.assumptions),
-        cautions=(*wood.cautions, *_kind_cautions(member)),
+        cautions=(*wood.cautions, *_kind_cautions(member, wood.woods[0].timber)),
         pending=pending(member),
+        new_work=any(defect.new_work for defect in member.condition or ()),
     )
 
 
@@ -171,22 +185,34 @@ def _edge(said: object, held: bool, name: str, notes: list[str]) -> Edge:
     return Edge(held=said == "held")
 
 
-def _kind_cautions(member: Member) -> tuple[str, ...]:
+def _kind_cautions(member: Member, timber: bool) -> tuple[str, ...]:
     said = []
     if member.bearing_on == "hanger":
         said.append("the hanger's own capacity is its maker's: nails, gauge and fit are to be checked against it")
-    if member.bearing_on == "masonry":
-        said.append("on masonry the usual least bearing is 3 in (IRC R502.6)")
+    least = LEAST_BEARING_IN[member.bearing_on or "wood"]
+    for number, reading in enumerate(member.bearing or (), 1):
+        if reading.value < least:
+            said.append(f"bearing at support {number} is {reading.shown()}, under the usual {least:g} in (IRC R502.6)")
+    if member.bearing_on == "masonry" and len(member.bearing or ()) <= len(member.spans or ()):
+        said.append("on masonry the usual least bearing is 3 in (IRC R502.6): measure it at every support")
+    if member.incised and timber:
+        said.append("incised timber: the standard gives no factor; its values are not reduced")
     if member.ties_rafters:
         said.append("this member also ties rafters: its tension is not assessed")
     if member.kind == "rafter" and not member.ties_rafters:
         said.append("a rafter pushes its wall outward where nothing ties it: thrust and ties are not assessed")
     if member.stands_for is not None:
-        said.append(
-            f"speaks for {member.stands_for.count} like members, of which {member.stands_for.measured} were measured"
-        )
+        like = member.stands_for
+        said.append(f"speaks for {like.count} like members, of which {like.measured} were measured")
     said += [f"not seen: {text}" for text in member.not_seen or ()]
     return tuple(said)
+
+
+def _depth_rule(ply_in: float, depth_in: float) -> str:
+    """What the depth-to-breadth rules of NDS 4.4.1.2 would ask for; information, 3.3.3 governs the ratio."""
+    ratio = nominal_size(depth_in) / nominal_size(ply_in)
+    asked = next(words for most, words in DEPTH_RULES if ratio <= most)
+    return f"NDS 4.4.1.2, nominal depth over breadth {ratio:.2g}: {asked} (information; 3.3.3 governs the ratio)"
 
 
 def pending(member: Member) -> tuple[str, ...]:

@@ -133,6 +133,7 @@ class Scenario:
     live         the use that is judged; None for a roof member
     present      the use the building has now, for the change-of-use ratios; None where not given
     snow_psf, roof_live_psf on the horizontal projection; dead_psf on the projection too
+    new_work     True where the planned work itself cuts the member
     pending      what is recorded but not yet assessed: such a member is never called adequate
     """
 
@@ -175,6 +176,7 @@ class Scenario:
     assumptions: tuple[str, ...]
     cautions: tuple[str, ...]
     pending: tuple[str, ...]
+    new_work: bool = False
 
     @property
     def supports_in(self) -> tuple[float, ...]:

@@ -213,11 +213,19 @@ def test_change_of_use_compares_both_ratios() -> None:
     # bending governs both: (10 + 40)/(10 + 30) - 1 = 25 %
     assert change.increase == pytest.approx(0.25, rel=1e-9)
     assert change.excused is False
+    # by load type: 40 over 30 psf
+    assert change.live_increase == pytest.approx(1 / 3, rel=1e-9)
+    assert change.alteration is True
     same = scenario(present=replace(PLAIN, name="other", live_psf=38.5))
     change = find(same).change_of_use
     assert change is not None
     assert change.increase == pytest.approx(50 / 48.5 - 1, rel=1e-9)
     assert change.excused is True
+    assert change.alteration is False
+    # a cut that the work makes has no 5 % tolerance (IEBC 503.3)
+    change = find(replace(same, new_work=True)).change_of_use
+    assert change is not None
+    assert (change.excused, change.alteration) == (False, True)
 
 
 def test_candidates_disagreeing_leave_it_undetermined() -> None:

@@ -3,12 +3,19 @@
 from __future__ import annotations
 
 import math
+from dataclasses import replace
+from typing import Any
 
 import numpy as np
 import pytest
 
 from assess import adjust, stability
+from assess.engine import compute, stiffness
 from assess.factors import flat_use_factor, size_factor, temperature_factor
+from assess.judge import judge
+from assess.scenario import Edge
+from assess.variants import variants
+from tests.scenarios import HEM_FIR_2, scenario
 
 
 @pytest.mark.parametrize(
@@ -106,8 +113,6 @@ def test_effective_length(row: stability.Formula, lu: float, d: float, by_hand: 
 def test_unbraced_length_between_held_points() -> None:
     x = np.array([[0.0, 30.0, 48.0, 100.0, 160.0]])
     ends = np.array([[0.0, 160.0]])
-    from assess.scenario import Edge
-
     assert list(stability.unbraced_length(x, Edge(), ends, True)[0]) == [160.0] * 5
     assert list(stability.unbraced_length(x, Edge(held=True), ends, True)[0]) == [0.0] * 5
     # braces at 48 and 120 in: the brace itself belongs to the longer of its two fields
@@ -115,3 +120,57 @@ def test_unbraced_length_between_held_points() -> None:
     assert list(at_places) == [48.0, 48.0, 72.0, 72.0, 40.0]
     every = stability.unbraced_length(x, Edge(every_in=60.0), ends, True)[0]
     assert list(every) == [60.0, 60.0, 60.0, 60.0, 40.0]
+
+
+@pytest.mark.parametrize(
+    ("changes", "applies"),
+    [
+        # NDS 4.3.9: three or more, spacing known and to 24 in, joined by flooring that shares; dimension lumber only
+        ({}, True),
+        ({"spacing_in": 24.0, "tributary_in": 24.0}, True),
+        ({"spacing_in": 24.1, "tributary_in": 24.1}, False),
+        ({"alike": 2}, False),
+        ({"spacing_in": None}, False),
+        ({"top": Edge(every_in=24.0)}, False),
+        ({"timber": True}, False),
+    ],
+)
+def test_repetitive_member_factor(changes: dict[str, Any], applies: bool) -> None:
+    wood = replace(HEM_FIR_2, timber=changes.pop("timber", False))
+    made = scenario(woods=(wood,), **changes)
+    rows = variants(made)
+    factor = float(adjust.factors(made, rows, rows.parts[0]).Cr[0, 0, 0])
+    assert factor == (1.15 if applies else 1.0)
+
+
+def test_wet_incised_and_hot_together() -> None:
+    # Fb 850 x 1.1 = 935 <= 1150: CM 1.0; Ci 0.80; Ct 0.7 wet at 110 F: Fb* = 850(1.1)(1.15)(0.80)(0.70) = 602.14 psi;
+    # E' = 1.3e6 (0.9)(0.9)(0.95) = 1,000,350 psi; Fv' = 150(0.97)(0.8)(0.7) = 81.48; Fc_perp' = 405(0.67)(0.7)(1.0)
+    made = scenario(wet=True, incised=True, temperature_F=110.0)
+    found = judge(made, compute(made))
+    by_name = {(c.check, c.combination): c.capacity for c in found.checks}
+    assert by_name["bending", "D+L"] == pytest.approx(602.14, abs=1e-6)
+    assert by_name["shear", "D+L"] == pytest.approx(81.48, abs=1e-9)
+    assert by_name["bearing", "D+L"] == pytest.approx(405 * 0.67 * 0.7, rel=1e-12)
+    rows = variants(made)
+    f = adjust.factors(made, rows, rows.parts[0])
+    assert float(stiffness(rows.parts[0], f)[0]) == pytest.approx(1_000_350.0, rel=1e-12)
+
+
+def test_timbers_take_no_lumber_factors() -> None:
+    # Table 4D: CM on Fb, Fv and E is 1.0, on Fc_perp 0.67 but 1.0 for Southern Pine; no Cr; incising only a caution
+    timber = replace(HEM_FIR_2, lumber=False, timber=True, cf_rules=("timber",), size_class="beams and stringers")
+    for species, on_bearing in (("Hem-Fir", 0.67), ("Southern Pine", 1.0)):
+        made = scenario(woods=(replace(timber, species=species),), width_in=7.5, depth_in=11.5, wet=True, incised=True)
+        rows = variants(made)
+        f = adjust.factors(made, rows, rows.parts[0])
+        got = [float(v[0, 0, 0]) for v in (f.CM_Fb, f.CM_Fv, f.CM_E, f.CM_Fc, f.Cr, f.Ci, f.CF)]
+        assert got == [1.0, 1.0, 1.0, on_bearing, 1.0, 1.0, 1.0]
+
+
+def test_a_plank_on_the_flat_takes_the_flat_use_factor() -> None:
+    # 2x10 on the flat: CF 1.1 of its wide face, Cfu 1.2 (Table 4A), no CL: 850(1.1)(1.2)(1.15) = 1290.3 psi
+    made = scenario(width_in=9.25, depth_in=1.5, on_flat=True, spans_in=(48.0,))
+    found = judge(made, compute(made))
+    capacity = next(c.capacity for c in found.checks if (c.check, c.combination) == ("bending", "D+L"))
+    assert capacity == pytest.approx(1290.3, abs=1e-6)

@@ -59,6 +59,8 @@ def change_sentence(finding: Finding) -> str | None:
         return f"change of use: {both}"
     rule = "within" if change.excused else "over"
     text = f"change of use: {both}, demand {change.increase * 100:+.1f} %, {rule} the 5 % of IEBC 506.5.1"
+    if change.alteration:
+        text += "; as an alteration it triggers a full check (503.3)"
     if max(change.present_ratio or 0.0, change.proposed_ratio or 0.0) > 1.0:
         text += "; a ratio is over 1 all the same"
     return text + "; the authority having jurisdiction decides"
