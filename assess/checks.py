@@ -1,17 +1,15 @@
-"""Strength checks along the member: bending, shear, bearing, uplift; each linear in the load that is asked for."""
+"""A check reduced to its worst place and greatest load, and bending along the member (NDS 3.3)."""
 
 from __future__ import annotations
 
 from dataclasses import dataclass
 
 import numpy as np
-from numpy import maximum
 from numpy.typing import NDArray
 
 from assess import adjust
 from assess.adjust import Factors
 from assess.combinations import CONCENTRATED
-from assess.effects import relief_allowed
 from assess.envelope import Envelope, note_sum
 from assess.mesh import Mesh
 from assess.scenario import Scenario
@@ -28,48 +26,6 @@ def bending_stress(M: Array, S: Array) -> Array:
     994.0
     """
     return M / S
-
-
-@formula("V", "lb", "statics")
-def shear_force(V_max: Array, V_min: Array) -> Array:
-    """Shear force, the greater of the two directions."""
-    return maximum(V_max, -V_min)
-
-
-@formula("fv", "psi", "NDS 3.4.2")
-def shear_stress(V: Array, b: Array, d: Array) -> Array:
-    """Shear stress parallel to grain at mid-depth of a rectangle.
-
-    >>> float(shear_stress(900.0, 1.5, 9.0))
-    100.0
-    """
-    return 1.5 * V / (b * d)
-
-
-@formula("fv", "psi", "mechanics: circle, 4V/3A")
-def shear_stress_round(V: Array, A: Array) -> Array:
-    """Shear stress parallel to grain at mid-depth of a circle."""
-    return 4 * V / (3 * A)
-
-
-@formula("fc_perp", "psi", "NDS 3.10.2")
-def bearing_stress(R: Array, b: Array, lb: Array) -> Array:
-    """Compression perpendicular to grain at a support.
-
-    >>> float(bearing_stress(900.0, 1.5, 1.5))
-    400.0
-    """
-    return R / (b * lb)
-
-
-@formula("Cb", "", "NDS 3.10.4 (3.10-2)")
-def bearing_area_factor(lb: Array) -> Array:
-    """Bearing area factor, for bearings under 6 in long and 3 in or more from the member's end.
-
-    >>> round(float(bearing_area_factor(1.5)), 2)
-    1.25
-    """
-    return (lb + 0.375) / lb
 
 
 @dataclass(frozen=True)
@@ -209,126 +165,3 @@ def uniform_only(scenario: Scenario, env: Envelope) -> NDArray[np.bool_]:
 def names(env: Envelope) -> tuple[str, ...]:
     """Names of the combinations, in order."""
     return tuple(c.name for c in env.combinations)
-
-
-def shear(
-    scenario: Scenario,
-    rows: Rows,
-    env: Envelope,
-    mesh: Mesh,
-    section: Section,
-    part: PartRows,
-    f: Factors,
-    trace: Trace | None = None,
-) -> Checked:
-    """Shear at both ends of every segment (NDS 3.4), relieved near supports where 3.4.3.1 allows it."""
-    relief = relief_allowed(scenario)
-    V = env.layout.V
-    if trace is not None:
-        trace.scope = "shear"
-        where = "loads within d of a support's face left out (3.4.3.1)" if relief else "every load counted"
-        note_sum(trace, env, "V_max", "lb", V, True, f"highest shear at this place, {where}")
-        note_sum(trace, env, "V_min", "lb", V, False, f"lowest shear at this place, {where}")
-    force = shear_force.on(trace, env.high(V), env.low(V))
-    shape = (rows.count, 1, 1)
-    value = adjust.Fv_prime.on(trace, part.wood("Fv").reshape(shape), env.CD, f.CM_Fv, f.Ct, f.Ci)
-    if part.round:
-        area = _both_ends(section.A)
-        demand = shear_stress_round.on(trace, force, area)
-        capacity = value * area * 0.75
-    else:
-        b, d = _both_ends(section.b_net), _both_ends(section.d_net)
-        demand = shear_stress.on(trace, force, b, d)
-        capacity = value * b * d / 1.5
-    ratio = demand / value
-    # Both signs have their own room; the lesser greatest load of the two stands.
-    room = np.concatenate([capacity - env.base_high[:, :, V], capacity + env.base_low[:, :, V]], axis=2)
-    per_unit = np.concatenate([env.unit_high[:, :, V], env.unit_low[:, :, V]], axis=2)
-    factors = {"CD": env.CD, "CM": f.CM_Fv, "Ct": f.Ct, "Ci": f.Ci}
-    at = np.concatenate([mesh.x[:, :-1], mesh.x[:, 1:]], axis=1)
-    return finish(
-        "shear", "psi", "NDS 3.4.2, 3.4.3.1" if relief else "NDS 3.4.2", "shear", names(env),
-        ratio, room, per_unit, demand, value, at, factors, f.none,
-    )  # fmt: skip
-
-
-def _both_ends(values: Array) -> Array:
-    """Values of segments at both ends of each [K, 1, 2(N-1)], or [K, 1, 1] where they are the same all along."""
-    return (np.concatenate([values, values], axis=1) if values.shape[1] > 1 else values)[:, None, :]
-
-
-def bearing(
-    scenario: Scenario,
-    rows: Rows,
-    env: Envelope,
-    mesh: Mesh,
-    part: PartRows,
-    f: Factors,
-    trace: Trace | None = None,
-) -> Checked:
-    """Compression perpendicular to grain at each support (NDS 3.10.2); no load-duration factor."""
-    if trace is not None:
-        trace.scope = "bearing"
-        note_sum(trace, env, "R", "lb", env.layout.R, True, "reaction at this support")
-    R = env.layout.R
-    lb = rows.bearing_in[:, None, :]
-    supports = mesh.supports_in
-    to_end = np.minimum(supports - mesh.x[:, :1], mesh.x[:, -1:] - supports)[:, None, :]
-    # 3.10.4: only under 6 in long and 3 in or more between the bearing and the member's end.
-    inner = (lb < 6.0) & (to_end - lb / 2 >= 3.0)
-    Cb = np.where(inner, bearing_area_factor(lb), 1.0)
-    shape = (rows.count, 1, 1)
-    value = adjust.Fc_perp_prime.on(trace, part.wood("Fc_perp").reshape(shape), f.CM_Fc, f.Ct, f.Ci_c, Cb)
-    b = part.breadth_in.reshape(shape)
-    demand = bearing_stress.on(trace, env.high(R), b, lb)
-    ratio = demand / value
-    factors = {"CM": f.CM_Fc, "Ct": f.Ct, "Ci": f.Ci_c, "Cb": Cb}
-    return finish(
-        "bearing", "psi", "NDS 3.10.2", "bearing", names(env), ratio,
-        value * b * lb - env.base_high[:, :, R], env.unit_high[:, :, R], demand, value, supports, factors, f.none,
-    )  # fmt: skip
-
-
-@formula("lift", "lb", "ASCE 7-16 2.4.1: 0.6D holds down")
-def lifting(R_lift: Array) -> Array:
-    """Upward force that the loads put on a support."""
-    return -R_lift
-
-
-@formula("held", "lb", "ASCE 7-16 2.4.1")
-def holding(R_D: Array) -> Array:
-    """Dead load that may be counted against uplift."""
-    return maximum(0.6 * R_D, 0.0)
-
-
-def uplift(scenario: Scenario, rows: Rows, env: Envelope, mesh: Mesh, trace: Trace | None = None) -> Checked | None:
-    """Lifting at a support against 0.6 of its dead reaction; None where nothing lifts.
-
-    source   engineering basis section 3; ASCE 7-16 2.4.1
-    """
-    R = env.layout.R
-    dead = env.effects.sums["dead"][0][:, None, R]
-    factors_dead = np.array([c.of("dead") for c in env.combinations]).reshape(1, -1, 1)
-    low = env.low(R) - factors_dead * dead
-    if not bool((low < 0.0).any()):
-        return None
-    low[:, :, scenario.hold_down] = 0.0  # held down by what is recorded there
-    if not bool((low < 0.0).any()):
-        return None
-    if trace is not None:
-        trace.scope = "uplift"
-        trace.value("R_lift", low, "lb", "statics, worst pattern", "reaction of the loads without dead load")
-        trace.value("R_D", dead, "lb", "statics", "reaction of the dead load")
-    demand = np.maximum(lifting.on(trace, low), 0.0)
-    capacity = holding.on(trace, dead)
-    with np.errstate(divide="ignore", invalid="ignore"):
-        ratio = np.where(demand > 0.0, demand / capacity, 0.0)
-    base = env.base_low[:, :, R] - factors_dead * dead
-    unit = env.unit_low[:, :, R].copy()
-    base[:, :, scenario.hold_down] = unit[:, :, scenario.hold_down] = 0.0
-    supports = mesh.supports_in
-    labels = tuple(c.name.replace("D+", "0.6D+", 1) if c.name.startswith("D+") else c.name for c in env.combinations)
-    return finish(
-        "uplift", "lb", "ASCE 7-16 2.4.1", "uplift", labels, ratio, capacity + base, -unit,
-        demand, np.broadcast_to(capacity, demand.shape), supports, {},
-    )  # fmt: skip

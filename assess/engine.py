@@ -6,7 +6,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from assess import adjust, checks, service
+from assess import adjust, check_shear, check_supports, checks, service
 from assess.checks import Checked
 from assess.effects import Effects, effects
 from assess.envelope import Envelope, envelope
@@ -58,10 +58,10 @@ def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
     env = envelope(scenario, rows, loads)
     strength = [
         *checks.bending(scenario, rows, env, stations, left[0], part, f, trace),
-        checks.shear(scenario, rows, env, stations, left[0], part, f, trace),
-        checks.bearing(scenario, rows, env, stations, part, f, trace),
+        check_shear.shear(scenario, rows, env, stations, left[0], part, f, trace),
+        check_supports.bearing(scenario, rows, env, stations, part, f, trace),
     ]
-    lift = checks.uplift(scenario, rows, env, stations, trace)
+    lift = check_supports.uplift(scenario, rows, env, stations, trace)
     if lift is not None:
         strength.append(lift)
     live, total = service.deflection(scenario, rows, env, stations, trace)

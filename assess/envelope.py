@@ -7,7 +7,8 @@ from dataclasses import dataclass
 import numpy as np
 
 from assess.combinations import CONCENTRATED, Combination, combinations
-from assess.effects import Effects, Layout
+from assess.effects import Effects
+from assess.layout import Layout
 from assess.scenario import Scenario
 from assess.trace import Array, Trace
 from assess.variants import Rows

@@ -6,7 +6,8 @@ from functools import reduce
 
 import numpy as np
 
-from assess.effects import Effects, Pair
+from assess.effects import Effects
+from assess.layout import Pair
 from assess.trace import Array
 
 
