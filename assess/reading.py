@@ -15,6 +15,7 @@ LONGEST = 200  # characters; no reading people take is longer
 MOST_READINGS = 50
 _LARGEST = 1e15  # no number of the record is near it; beyond, digits are lost
 _SMALLEST = 1e-6  # engine units; nothing measured is smaller, and noughts with an exponent would only break the statics
+_CONVERTED = 1e-9  # of a limit: 25.4 mm must be read where 1 in is, though its conversion falls a hair short
 _MANY_DIGITS = 10**40
 
 Typed = str | int | float | tuple[str | int | float, ...]
@@ -128,5 +129,9 @@ def _text(typed: object, quantity: Quantity, field: str) -> str:
 
 
 def _outside(value: float, quantity: Quantity) -> bool:
-    low = value <= quantity.low if quantity.low_open else value < quantity.low
-    return low or not value <= quantity.high or 0.0 < abs(value) < _SMALLEST
+    low = quantity.low - _CONVERTED * abs(quantity.low)
+    high = quantity.high + _CONVERTED * abs(quantity.high)
+    below = value <= low if quantity.low_open else value < low
+    # A degree has no smallness: 0 °F is -17.7778 °C.
+    tiny = quantity.unit != "degF" and 0.0 < abs(value) < _SMALLEST
+    return below or not value <= high or tiny
