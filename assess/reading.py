@@ -7,7 +7,7 @@ from dataclasses import dataclass
 
 from assess.errors import ReadingError
 from assess.quantities import Quantity
-from assess.reading_grammar import measure, plain, split_tolerance
+from assess.reading_grammar import measure, plain, rounded, split_tolerance
 from assess.reading_shown import as_text
 from assess.units import METRIC
 
@@ -86,7 +86,7 @@ def parse(typed: object, quantity: Quantity, units: str = "US", field: str = "")
     values = [part.value for part in parts]
     return Reading(
         typed=tuple(typed),
-        value=math.fsum(values) / len(values),
+        value=rounded(math.fsum(values) / len(values)),
         tolerance=max((part.tolerance for part in parts if part.tolerance is not None), default=None),
         spread=(max(values) - min(values)) / 2,
         quantity=quantity,

@@ -34,6 +34,7 @@ _PLAIN = str.maketrans(
     {"−": "-", "–": "-", "‐": "-", "‑": "-", "′": "'", "’": "'", "‘": "'", "″": '"', "”": '"', "“": '"', "⁄": "/"}
     | {chr(0xFF10 + digit): str(digit) for digit in range(10)}
 )
+_SURE_DIGITS = 14  # significant digits that a conversion or a mean leaves right
 _MARKS = ("±", "+/-", "+-")
 
 
@@ -115,12 +116,21 @@ def measure(text: str, quantity: Quantity, bare: str, is_tolerance: bool = False
 
 def _in_engine_unit(number: float, unit: str, quantity: Quantity, is_tolerance: bool) -> float:
     if unit not in ("degF", "degC") and quantity.unit != "degF":
-        return number * factor(unit, quantity.unit)
+        return rounded(number * factor(unit, quantity.unit)) if unit != quantity.unit else number
     if quantity.unit != "degF" or unit not in ("degF", "degC"):
         raise refused("has the wrong kind of unit")
     if unit == "degF":
         return number
-    return number * 9 / 5 + (0.0 if is_tolerance else 32.0)
+    return rounded(number * 9 / 5 + (0.0 if is_tolerance else 32.0))
+
+
+def rounded(value: float) -> float:
+    """A computed value without the dust of computing, so that 0.6096 m is 24 in where a rule stops at 24 in.
+
+    >>> rounded(24.000000000000004), rounded(7.480314960629921)
+    (24.0, 7.4803149606299)
+    """
+    return float(f"{value:.{_SURE_DIGITS}g}")
 
 
 def _inches(text: str) -> float:
