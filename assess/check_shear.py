@@ -13,6 +13,7 @@ from assess.mesh import Mesh
 from assess.relief import relief_allowed
 from assess.scenario import Scenario
 from assess.section import Section
+from assess.shear_depth import shear_depth
 from assess.trace import Array, Trace, formula
 from assess.variants import PartRows, Rows
 
@@ -64,9 +65,17 @@ def shear(
         area = _both_ends(section.A)
         demand = shear_stress_round.on(trace, force, area)
         capacity = value * area * 0.75
+        clause = "NDS 3.4.2"
     else:
-        b, d = _both_ends(section.b_net), _both_ends(section.d_net)
-        demand = shear_stress.on(trace, force, b, d)
+        b = _both_ends(section.b_net)
+        d = _both_ends(section.d_net)
+        clause = "NDS 3.4.2"
+        if scenario.full_shear:
+            depth = shear_depth(scenario, env, mesh, section, part, trace)
+            d = np.concatenate([depth, depth], axis=2)
+            clause = "NDS 3.4.3.2" if scenario.hung_de_in is None else "NDS 3.4.3.2, 3.4.3.3"
+        with np.errstate(divide="ignore", invalid="ignore"):
+            demand = shear_stress.on(trace, force, b, d)
         capacity = value * b * d / 1.5
     ratio = demand / value
     # Both signs have their own room; the lesser greatest load of the two stands.
@@ -75,7 +84,7 @@ def shear(
     factors = {"CD": env.CD, "CM": f.CM_Fv, "Ct": f.Ct, "Ci": f.Ci}
     at = np.concatenate([mesh.x[:, :-1], mesh.x[:, 1:]], axis=1)
     return finish(
-        "shear", "psi", "NDS 3.4.2, 3.4.3.1" if relief else "NDS 3.4.2", "shear", names(env),
+        "shear", "psi", f"{clause}, 3.4.3.1" if relief else clause, "shear", names(env),
         ratio, room, per_unit, demand, value, at, factors, f.none,
     )  # fmt: skip
 

@@ -61,9 +61,11 @@ def bearing(
     demand = bearing_stress.on(trace, env.high(R), b, lb)
     ratio = demand / value
     factors = {"CM": f.CM_Fc, "Ct": f.Ct, "Ci": f.Ci_c, "Cb": Cb}
+    lost = [f"bearing at support {support + 1} is not relied on: {why}" for support, why in scenario.lost_bearings]
+    none = f.none or ("; ".join(lost) if lost else None)
     return finish(
         "bearing", "psi", "NDS 3.10.2", "bearing", names(env), ratio,
-        value * b * lb - env.base_high[:, :, R], env.unit_high[:, :, R], demand, value, supports, factors, f.none,
+        value * b * lb - env.base_high[:, :, R], env.unit_high[:, :, R], demand, value, supports, factors, none,
     )  # fmt: skip
 
 

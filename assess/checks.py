@@ -127,7 +127,8 @@ def bending(
             note_sum(trace, env, "M", "lb-in", M, sagging, f"{sign} moment at this place")
         value = adjust.bending_value(scenario, part, f, star, sagging, uniform, mesh.x, mesh.supports_in, trace)
         moment = base + env.size * unit
-        demand = bending_stress.on(trace, moment, S)
+        with np.errstate(divide="ignore", invalid="ignore"):  # nothing may be left of the section
+            demand = bending_stress.on(trace, moment, S)
         ratio = demand / value.value
         none = f.none or no_bending_value(scenario, part)
         if none is None and bool(value.slender.any()):

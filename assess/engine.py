@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
@@ -18,15 +18,21 @@ from assess.trace import Array, Trace
 from assess.variants import PartRows, Rows, variants
 from assess.weight import density_pcf, own_weight_pli
 
+LEAST_I = 1e-6  # of the whole section's
+
 
 @dataclass(frozen=True)
 class Computed:
-    """Everything the checks found, over K rows; `judge` makes a finding of it."""
+    """Everything the checks found, over K rows; `judge` makes a finding of it.
+
+    gone   where nothing is left of the section, in words; None where something is left everywhere
+    """
 
     rows: Rows
     mesh: Mesh
     envelope: Envelope
     strength: tuple[Checked, ...]
+    gone: str | None
     live_deflection: Checked
     total_deflection: Checked
     bounce: service.Bounce
@@ -50,10 +56,17 @@ def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
         trace.scope = "weight and stiffness"
     own = own_pli(scenario, rows, part, whole, trace)
     f = adjust.factors(scenario, rows, part, trace)
+    gone = nothing_left(left[0], stations)
+    if gone is not None:
+        f = replace(f, none=f.none or gone)
     E = [stiffness(part, f, trace)]
     E += [stiffness(piece, adjust.factors(scenario, rows, piece)) for piece in rows.parts[1:]]
     shape = stations.mid.shape
-    EI = [np.broadcast_to(E[index][:, None] * section.I, shape) for index, section in enumerate(left)]
+    # Where nothing is left the member is broken, and said to be; a trace of stiffness keeps the statics finite.
+    EI = [
+        np.broadcast_to(E[index][:, None] * np.maximum(section.I, LEAST_I * whole.I), shape)
+        for index, section in enumerate(left)
+    ]
     loads = on_part(0, scenario, rows, stations, EI, own)
     env = envelope(scenario, rows, loads)
     strength = [
@@ -66,8 +79,29 @@ def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
         strength.append(lift)
     live, total = service.deflection(scenario, rows, env, stations, trace)
     dead_pli = rows.dead_psf * rows.tributary_in / 144.0 + own
-    bounce = service.bounce(rows, E[0], whole.I[:, 0], dead_pli, trace)
-    return Computed(rows, stations, env, tuple(strength), live, total, bounce)
+    bounce = service.bounce(rows, E[0], stiff_I(scenario, rows, loads, E[0], whole), dead_pli, trace)
+    return Computed(rows, stations, env, tuple(strength), gone, live, total, bounce)
+
+
+def nothing_left(section: Section, stations: Mesh) -> str | None:
+    """Where the section has nothing left, in words, or None."""
+    empty = section.A <= 0.0
+    if not bool(empty.any()):
+        return None
+    at = float(stations.mid[np.broadcast_to(empty, stations.mid.shape)].min())
+    return f"nothing is left of the section at {at / 12:.1f} ft: the member is broken there"
+
+
+def stiff_I(scenario: Scenario, rows: Rows, loads: Effects, E: Array, whole: Section) -> Array:
+    """Moment of inertia of the whole section, or the even one that would bend as far as the weakened span [K] [in4].
+
+    source   mechanics: a simple span under 1 lb/in bends 5 L^4/(384 E I)
+    """
+    if not scenario.losses or not scenario.simple:
+        return whole.I[:, 0]
+    y = loads.unit[0][:, loads.layout.y].max(axis=1)
+    I: Array = np.minimum(5.0 * rows.spans_in[:, 0] ** 4 / (384.0 * E * y), whole.I[:, 0])  # noqa: E741
+    return I
 
 
 def on_part(index: int, scenario: Scenario, rows: Rows, stations: Mesh, EI: list[Array], own: Array) -> Effects:

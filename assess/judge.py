@@ -11,6 +11,7 @@ from assess.checks import Checked
 from assess.combinations import CONCENTRATED
 from assess.engine import Computed
 from assess.finding import ChangeOfUse, Check, Finding, Governs, LiveLoad, finite
+from assess.prescriptive import prescriptive
 from assess.scenario import Scenario
 from assess.service import LEAST_FREQUENCY_HZ
 from assess.trace import Array
@@ -45,10 +46,16 @@ def judge(scenario: Scenario, computed: Computed) -> Finding:
     shore = _dead_fails(computed, row)
     if shore:
         cautions.append("shore now: dead load alone overloads the member as it stands")
+    if computed.gone is not None or scenario.lost_bearings:
+        shore = True
+        cautions.append("shore now: " + ("a bearing is lost" if computed.gone is None else "the member is broken"))
     cautions += [f"recorded, not yet assessed: {what}" for what in scenario.pending]
     if len(by_row) > 1:
         label = scenario.parts[0].woods[row].label
         cautions.append(f"{len(by_row)} candidate woods assessed; {label} governs")
+    breaches = [c.combination for c in prescriptive(scenario) if c.ratio is None or c.ratio > 1.0]
+    if breaches:
+        cautions.append("beyond the prescriptive limits (IRC R502.8.1): " + "; ".join(breaches))
     place = _at(governing, row, combination)
     return Finding(
         verdict=verdict,
@@ -60,7 +67,7 @@ def judge(scenario: Scenario, computed: Computed) -> Finding:
         live_load=live,
         change_of_use=_change_of_use(scenario, ratios.max(axis=0), row, judged),
         shore_now=shore,
-        checks=_checks(computed, row),
+        checks=_checks(scenario, computed, row),
         settle=None,
         assumptions=scenario.assumptions,
         cautions=tuple(cautions) + scenario.cautions + STANDING,
@@ -127,7 +134,9 @@ def _verdict(by_row: Array, pending: bool) -> str:
 def _dead_fails(computed: Computed, row: int) -> bool:
     """Whether a strength check fails under dead load alone: urgent, apart from any ratio under use."""
     return any(
-        name == "D" and c.ratio[row, i] > 1.0 for c in computed.strength for i, name in enumerate(c.combinations)
+        name == "D" and c.governs_none is None and c.ratio[row, i] > 1.0
+        for c in computed.strength
+        for i, name in enumerate(c.combinations)
     )
 
 
@@ -157,7 +166,7 @@ def _live_load(scenario: Scenario, computed: Computed, no_value: bool) -> tuple[
     notes = []
     if math.isfinite(strength):
         notes.append("posting figure is from the readings as they stand, not from the low end of their range")
-    if any(float(c.ratio[:judged, 0].max()) > 1.0 for c in computed.strength):
+    if any(c.governs_none is None and float(c.ratio[:judged, 0].max()) > 1.0 for c in computed.strength):
         notes.append("overloaded as it stands: no live load can be carried")
     of = "use" if env.asked == "live" else env.asked
     return (
@@ -185,7 +194,7 @@ def posting(strength_psf: float) -> float | None:
     return math.floor(strength_psf / POSTING_STEP_PSF) * POSTING_STEP_PSF
 
 
-def _checks(computed: Computed, row: int) -> tuple[Check, ...]:
+def _checks(scenario: Scenario, computed: Computed, row: int) -> tuple[Check, ...]:
     """The governing case of each check in each combination, for the worst row."""
     found: dict[tuple[str, str], Check] = {}
     for checked in (*computed.strength, computed.live_deflection, computed.total_deflection):
@@ -195,7 +204,7 @@ def _checks(computed: Computed, row: int) -> tuple[Check, ...]:
             # Bending comes once for each sign of moment: the greater stands for the combination.
             if held is None or (held.ratio is not None and (check.ratio is None or check.ratio > held.ratio)):
                 found[checked.name, name] = check
-    return (*found.values(), *_bounce(computed, row))
+    return (*found.values(), *prescriptive(scenario), *_bounce(computed, row))
 
 
 def _check(checked: Checked, row: int, combination: int) -> Check:

@@ -50,6 +50,17 @@ def split(scenario: Scenario) -> list[tuple[float, Scenario]]:
                         replace(p, at_in=p.at_in - start) for p in scenario.point_loads if low <= p.at_in <= high
                     ),
                     line_loads=tuple(lines),
+                    losses=tuple(
+                        replace(loss, from_in=loss.from_in - start, to_in=loss.to_in - start)
+                        for loss in scenario.losses
+                        if loss.to_in > low and loss.from_in < high
+                    ),
+                    splits=tuple(
+                        split
+                        for split in scenario.splits
+                        if (split.end == "left" and index == 0) or (split.end == "right" and index == last)
+                    ),
+                    lost_bearings=tuple((s - index, why) for s, why in scenario.lost_bearings if 0 <= s - index <= 1),
                 ),
             )
         )

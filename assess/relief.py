@@ -38,8 +38,8 @@ class Relief:
 
 
 def relief_allowed(scenario: Scenario) -> bool:
-    """Whether the member bears on its bottom and is loaded on its top (NDS 3.4.3.1)."""
-    return scenario.loaded_on_top and scenario.bearing_on != "hanger"
+    """Whether the member bears on its bottom, is loaded on its top, and no rule asks for full shear (NDS 3.4.3.1)."""
+    return scenario.loaded_on_top and scenario.bearing_on != "hanger" and not scenario.full_shear
 
 
 def relief_of(mesh: Mesh, allowed: bool) -> Relief:

@@ -7,6 +7,7 @@ from assess.kinds import KINDS, Kind
 from assess.reading import Reading
 from assess.record import Member
 from assess.record_parts import Size
+from assess.resolve_condition import resolve_condition
 from assess.resolve_loads import resolve_loads
 from assess.resolve_wood import resolve_wood
 from assess.scenario import Edge, Part, Scenario, Stage
@@ -49,6 +50,8 @@ def resolve(member: Member) -> Scenario:
     wood = resolve_wood(member, ply_in, depth_in)
     loads = resolve_loads(member)
     spans_in, face_in, bearing_in, measured = _supports(member, notes)
+    supports_in = tuple(sum(spans_in[:i]) for i in range(len(spans_in) + 1))
+    condition = resolve_condition(member, ply_in * plies, depth_in, is_round, supports_in, bearing_in)
     wet, moisture = _moisture(member, kind, notes)
     spacing = member.spacing.value if member.spacing is not None else None
     tributary = spacing if spacing is not None else (member.tributary.value if member.tributary is not None else 0.0)
@@ -112,10 +115,13 @@ def resolve(member: Member) -> Scenario:
         line_loads=loads.lines,
         limit_live=limit_live,
         limit_total=limit_total,
-        losses=(),
-        assumptions=(*wood.assumptions, *notes, *loads.assumptions),
-        cautions=(*wood.cautions, *_kind_cautions(member, wood.woods[0].timber)),
-        pending=pending(member),
+        losses=condition.losses,
+        splits=condition.splits,
+        lost_bearings=condition.lost,
+        hung_de_in=_hung(member),
+        assumptions=(*wood.assumptions, *notes, *loads.assumptions, *condition.assumptions),
+        cautions=(*wood.cautions, *condition.cautions, *_kind_cautions(member, wood.woods[0].timber)),
+        pending=(*condition.pending, *pending(member)),
         new_work=any(defect.new_work for defect in member.condition or ()),
     )
 
@@ -215,13 +221,21 @@ def _depth_rule(ply_in: float, depth_in: float) -> str:
     return f"NDS 4.4.1.2, nominal depth over breadth {ratio:.2g}: {asked} (information; 3.3.3 governs the ratio)"
 
 
+def _hung(member: Member) -> float | None:
+    """Depth to the fasteners that hang the member, where that is how it is hung and it was measured [in]."""
+    hanger = member.hanger
+    if hanger is None or hanger.kind != "fasteners" or hanger.de is None:
+        return None
+    return hanger.de.value
+
+
 def pending(member: Member) -> tuple[str, ...]:
     """What is recorded but not yet assessed; such a member is never called adequate."""
-    found = [f"condition: {defect.defect}" for defect in member.condition or ()]
+    found = []
     if member.ties_rafters:
         found.append("tension from the rafters it ties")
-    if member.hanger is not None and member.hanger.kind == "fasteners":
-        found.append("hung by fasteners")
+    if member.hanger is not None and member.hanger.kind == "fasteners" and member.hanger.de is None:
+        found.append("hung by fasteners, their depth de not measured")
     words = {
         "added": "added parts",
         "new_supports": "new supports",

@@ -44,10 +44,12 @@ class Edge:
 class Loss:
     """Wood that is gone over a length: depth off top and bottom, breadth off the sides, or a bore (in).
 
+    kind   'notch', 'hole', 'decay', 'insects', 'char' or 'remaining'
     A bore has diameter_in and height_in (of its centre above the bottom edge); the rest are zero for it.
     """
 
     name: str
+    kind: str
     from_in: float
     to_in: float
     top_in: float = 0.0
@@ -55,6 +57,16 @@ class Loss:
     side_in: float = 0.0
     diameter_in: float = 0.0
     height_in: float = 0.0
+
+
+@dataclass(frozen=True)
+class Split:
+    """A through split at an end: the depth that still carries there, and how far it runs (in)."""
+
+    name: str
+    end: str
+    remaining_in: float
+    length_in: float
 
 
 @dataclass(frozen=True)
@@ -134,6 +146,8 @@ class Scenario:
     present      the use the building has now, for the change-of-use ratios; None where not given
     snow_psf, roof_live_psf on the horizontal projection; dead_psf on the projection too
     new_work     True where the planned work itself cuts the member
+    lost_bearings  (support from 0, why) for each bearing that is not relied on
+    hung_de_in   depth from the unloaded edge to the nearest fastener that hangs the member; None where none does
     pending      what is recorded but not yet assessed: such a member is never called adequate
     """
 
@@ -173,6 +187,9 @@ class Scenario:
     limit_live: float
     limit_total: float
     losses: tuple[Loss, ...]
+    splits: tuple[Split, ...]
+    lost_bearings: tuple[tuple[int, str], ...]
+    hung_de_in: float | None
     assumptions: tuple[str, ...]
     cautions: tuple[str, ...]
     pending: tuple[str, ...]
@@ -185,6 +202,12 @@ class Scenario:
         for span in self.spans_in:
             places.append(places[-1] + span)
         return tuple(places)
+
+    @property
+    def full_shear(self) -> bool:
+        """Whether a notch, a split or fasteners rule the shear: then it is never relieved (NDS 3.4.3.2)."""
+        notched = any(loss.kind == "notch" for loss in self.losses)
+        return notched or bool(self.splits) or self.hung_de_in is not None
 
     @property
     def typed_loads(self) -> frozenset[str]:

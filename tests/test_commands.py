@@ -110,7 +110,7 @@ def test_explain_prints_steps_in_text_and_json(tmp_path: Path, capsys: pytest.Ca
     [
         ([put("J-1"), put("J-2", spans=["20 ft"])], exits.NOT_ADEQUATE),
         ([put("J-1", dead=None)], exits.NOT_ADEQUATE),
-        ([put("J-1", condition=[{"defect": "check"}])], exits.NOT_ADEQUATE),
+        ([put("J-1", sag="3/8 in")], exits.NOT_ADEQUATE),
         ([put("J-1"), put("J-2", tributary="4 ft")], exits.BAD_INPUT),
         ([put("J-1"), put("J-2", size={"width": "1 1/2 in", "depth": "0 in"})], exits.BAD_INPUT),
         ([put("J-1", wood={"species": "Hem-Fir", "grade": "Construction"})], exits.BAD_INPUT),
