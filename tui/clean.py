@@ -7,10 +7,10 @@ import unicodedata
 LONGEST = 2_000  # characters shown of one text
 MOST_MARKS = 4  # combining marks kept on one letter
 
-# Bidirectional controls, zero-width characters and line separators.
+# Line separators, blanks that look like nothing, and selectors that change a character's width in some terminals.
 _HIDDEN = {
-    *range(0x200B, 0x2010), *range(0x202A, 0x202F), *range(0x2060, 0x2070), 0x061C, 0xFEFF, 0x2028, 0x2029,
-    0x00AD, 0x180E, *range(0xFFF9, 0xFFFC), *range(0xE0000, 0xE0080),
+    0x2028, 0x2029, 0x034F, 0x115F, 0x1160, 0x17B4, 0x17B5, 0x2800, 0x3164, 0xFFA0, *range(0xFE00, 0xFE10),
+    *range(0xE0000, 0xE01F0),
 }  # fmt: skip
 
 
@@ -25,24 +25,28 @@ def clean(text: str, lines: bool = False, longest: int = LONGEST) -> str:
     ('a␛[2Jb', 'x‹202E›y')
     """
     cut = len(text) > longest
+    shown = text[:longest]
+    if shown.isascii() and shown.isprintable():
+        return shown + (f" … ({len(text):,} characters)" if cut else "")
     out: list[str] = []
     marks = 0
-    for char in text[:longest]:
-        code = ord(char)
-        if lines and char in "\n\t":
-            out.append(char)
-        elif code < 0x20:
-            out.append(chr(0x2400 + code))
-        elif code == 0x7F:
-            out.append("␡")
-        elif 0x80 <= code < 0xA0 or code in _HIDDEN or 0xD800 <= code < 0xE000 or code & 0xFFFE == 0xFFFE:
-            out.append(f"‹{code:04X}›")
-        elif unicodedata.combining(char):
+    for char in shown:
+        if unicodedata.category(char) in ("Mn", "Me") and ord(char) not in _HIDDEN:
             marks += 1
             if marks <= MOST_MARKS:
                 out.append(char)
             continue
-        else:
-            out.append(char)
         marks = 0
+        out.append(char if lines and char in "\n\t" else _visible(char))
     return "".join(out) + (f" … ({len(text):,} characters)" if cut else "")
+
+
+def _visible(char: str) -> str:
+    code = ord(char)
+    if code < 0x20:
+        return chr(0x2400 + code)
+    if code == 0x7F:
+        return "␡"
+    if code in _HIDDEN or unicodedata.category(char) in ("Cc", "Cf", "Cs") or code & 0xFFFE == 0xFFFE:
+        return f"‹{code:04X}›"
+    return char

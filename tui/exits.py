@@ -7,3 +7,5 @@ NOT_ADEQUATE = 1  # some member inadequate, undetermined or incomplete
 BAD_INPUT = 2
 UNEXPECTED = 3
 INTERRUPTED = 130
+TERMINATED = 143  # by SIGTERM; the text being typed is kept
+HUNG_UP = 129  # the terminal went away; likewise

@@ -1,0 +1,244 @@
+"""The readings of a member, line by line, and the entry that lies over the line being typed."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+
+from rich.cells import cell_len
+from textual.app import ComposeResult
+from textual.events import DescendantFocus
+from textual.message import Message
+from textual.timer import Timer
+from textual.widget import Widget
+
+from tui.clean import clean
+from tui.screens.line import Line
+from tui.screens.rows import Piece, RowList, fit
+from tui.sheet import SheetLine
+
+LABEL = 12
+ANSWER_AFTER = 0.02  # s; the key is echoed first, the answer follows within two frames
+DRAFT_AFTER = 1.0  # s without a key
+LOOKS = {
+    "read": ("", "muted"),
+    "draft": ("strong", "undetermined"),
+    "refused": ("strong", "refused"),
+    "bay": ("", "muted"),
+    "taken": ("", "faint"),
+    "needed": ("", "incomplete"),
+    "none": ("", ""),
+}
+
+
+class SheetRows(RowList):
+    """The lines of the form."""
+
+    def __init__(self) -> None:
+        super().__init__(id="sheet")
+        self.lines: list[SheetLine] = []
+        self.typing_echo: tuple[str, str] | None = None  # (words, look) beside the line being typed
+        self.point: Callable[[int], None] = lambda row: None
+
+    def row_count(self) -> int:
+        """How many lines."""
+        return len(self.lines)
+
+    def pointed(self, row: int) -> None:
+        """A line was clicked."""
+        self.point(row)
+
+    @property
+    def text_width(self) -> int:
+        """Columns of the text as typed."""
+        return max(8, round((self.row_width - LABEL) * 0.54))
+
+    def pieces(self, row: int, width: int) -> list[Piece]:
+        """Label, text as typed, how it was understood."""
+        line = self.lines[row]
+        text_look, echo_look = LOOKS[line.state]
+        echo = f"! {line.echo}" if line.state == "refused" else line.echo
+        room, text_width = max(0, width - LABEL), self.text_width
+        if self.typing_echo is not None and row == self.cursor:
+            words, look = self.typing_echo
+            return [
+                (fit(line.field.label, LABEL), "strong"),
+                (" " * text_width, ""),
+                (fit(" " + words, room - text_width), look),
+            ]
+        long = cell_len(line.text)
+        if long > text_width:
+            # A long text takes the room its understanding does not need.
+            text_width = min(long, max(text_width, room - 1 - cell_len(echo))) if echo else room
+        return [
+            (fit(line.field.label, LABEL), "muted"),
+            (fit(line.text, text_width), text_look),
+            (fit(" " + echo, room - text_width), echo_look),
+        ]
+
+
+class Readings(Widget):
+    """The form; what is typed is proposed to `keep` and `watch`, which belong to the screen.
+
+    keep    (field key, text) -> why it is refused, or None where it is kept
+    watch   shows what the text would change; None where typing ended
+    leave   a text is left behind unkept
+    """
+
+    class Typing(Message):
+        """Typing began, moved to another line, or ended."""
+
+    class Paused(Message):
+        """Nothing was typed for a while."""
+
+    def __init__(self) -> None:
+        super().__init__(id="readings")
+        self.rows = SheetRows()
+        self.rows.point = self.point
+        self.line = Line(id="typed")
+        self.keep: Callable[[str, str], str | None] = lambda key, text: None
+        self.leave: Callable[[str, str], None] = lambda key, text: None
+        self.watch: Callable[[str, str], tuple[str, str]] = lambda key, text: ("", "")
+        self.start_text: Callable[[SheetLine], str | None] = lambda line: line.text
+        self.began = ""
+        self.typing = False
+        self._answer: Timer | None = None
+        self._draft: Timer | None = None
+
+    def compose(self) -> ComposeResult:
+        yield self.rows
+        yield self.line
+
+    def on_mount(self) -> None:
+        """Nothing is typed yet."""
+        self.line.display = False
+        self.line.resting = True
+
+    @property
+    def current(self) -> SheetLine | None:
+        """The line under the cursor."""
+        return self.rows.lines[self.rows.cursor] if self.rows.lines else None
+
+    def show(self, lines: list[SheetLine]) -> None:
+        """Show the lines; the cursor stays with its field."""
+        held = self.current.field.key if self.current is not None else ""
+        self.rows.lines = lines
+        keys = [line.field.key for line in lines]
+        if held in keys and keys.index(held) != self.rows.cursor:
+            self.rows.cursor = keys.index(held)
+        self.rows.refill()
+
+    def begin(self) -> bool:
+        """Type the line under the cursor; False where it cannot be typed."""
+        line = self.current
+        text = self.start_text(line) if line is not None else None
+        if text is None:
+            return False
+        self.began = clean(text, longest=10_000)
+        self.typing = True
+        self.rows.typing_echo = ("", "")
+        self.place()
+        self.line.display = True
+        self.line.start(text)
+        self.judge()
+        self.post_message(self.Typing())
+        return True
+
+    def place(self) -> None:
+        """Lay the entry over its line."""
+        self.line.styles.width = self.rows.text_width
+        self.line.styles.offset = (2 + LABEL, self.rows.cursor - self.rows.scroll_offset.y)
+
+    def stop(self) -> None:
+        """End typing; a changed text is left behind as a draft."""
+        if self.typing and self.line.value != self.began:
+            self.leave(self.current.field.key, self.line.value)  # type: ignore[union-attr]
+        self._end()
+
+    def point(self, row: int) -> None:
+        """A line was clicked: type there."""
+        self.settle()
+        self.rows.cursor = row
+        if not self.begin():
+            self._end()
+
+    def on_descendant_focus(self, event: DescendantFocus) -> None:
+        """A click beside the entry does not end it."""
+        if self.typing and event.widget is self.rows:
+            self.screen.set_focus(self.line)
+
+    def _end(self) -> None:
+        if not self.typing:
+            return
+        self.typing = False
+        self._quiet()
+        self.line.resting = True
+        self.line.display = False
+        self.rows.typing_echo = None
+        self.rows.refresh()
+        self.screen.set_focus(self.rows)
+        self.post_message(self.Typing())
+
+    def _quiet(self) -> None:
+        for timer in (self._answer, self._draft):
+            if timer is not None:
+                timer.stop()
+
+    def settle(self) -> None:
+        """Leave a line that was typed: kept where it is understood, else left behind as a draft."""
+        if not self.typing or self.current is None:
+            return
+        key, text = self.current.field.key, self.line.value
+        if text != self.began and self.keep(key, text) is not None:
+            self.leave(key, text)
+
+    def enter(self) -> None:
+        """Keep the text and go on to the next line; stay where it is refused."""
+        line = self.current
+        if line is None:
+            return
+        same = self.line.value == self.began and line.state not in ("draft", "refused")
+        if same or self.keep(line.field.key, self.line.value) is None:
+            self._onward(1)
+        else:
+            self.judge()
+
+    def go(self, by: int) -> None:
+        """Go to another line and type there."""
+        self.settle()
+        self._onward(by)
+
+    def _onward(self, by: int) -> None:
+        self._quiet()
+        last = len(self.rows.lines) - 1
+        target = self.rows.cursor + by
+        if not 0 <= target <= last or self.rows.lines[target].field.form == "note":
+            self.rows.cursor = max(0, min(last, target))
+            self._end()
+            return
+        self.rows.cursor = target
+        if not self.begin():
+            self._end()
+
+    def on_input_changed(self, event: Line.Changed) -> None:
+        """Show what the text says so far, after its echo; coalesce the work, not the keys."""
+        event.stop()
+        if not self.typing:
+            return
+        self._quiet()
+        self._answer = self.set_timer(ANSWER_AFTER, self.judge)
+        self._draft = self.set_timer(DRAFT_AFTER, lambda: self.post_message(self.Paused()))
+
+    def judge(self) -> None:
+        """Ask the screen what the text says."""
+        if self.typing and self.current is not None:
+            self.rows.typing_echo = self.watch(self.current.field.key, self.line.value)
+            self.rows.refresh()
+
+    def on_row_list_moved(self, event: RowList.Moved) -> None:
+        """Keep the entry over its line."""
+        if self.typing:
+            self.call_after_refresh(self.place)
+
+    def on_resize(self) -> None:
+        """Keep the entry over its line."""
+        self.call_after_refresh(self.place)

@@ -1,0 +1,166 @@
+"""What happens to a text typed into a member's form: shown at once, refused in words, kept on disk, or left a draft."""
+
+from __future__ import annotations
+
+from tui.clean import clean
+from tui.field_shown import choices, refusal
+from tui.field_text import raw_of, to_raw, to_text, whole
+from tui.fields import BY_KEY
+from tui.screens.base import Base
+from tui.screens.readings import Readings
+from tui.sheet import SheetLine, changed, lines, problem_of
+from tui.store import NotKeptError, Saved, Seen, Store
+
+
+class TypingScreen(Base[None]):
+    """The part of a member's screen that proposes texts to the store."""
+
+    def __init__(self, store: Store, member_id: str) -> None:
+        super().__init__()
+        self.store, self.member_id = store, member_id
+        self.message = ""
+        self.status = ""
+        self.why = ""  # why the text being typed is refused
+        self.readings = Readings()
+
+    def show(self) -> None:
+        """Show the member as the record has it."""
+        raise NotImplementedError
+
+    def show_answer(self, seen: Seen, blocked: str | None) -> None:
+        """Show the answer and the drawing."""
+        raise NotImplementedError
+
+    def show_lines(self) -> None:
+        """Show the lines around the form."""
+        raise NotImplementedError
+
+    def say(self, words: str) -> None:
+        """Say something beneath the readings."""
+        self.message = clean(words, longest=300)
+        self.show_lines()
+
+    def start_text(self, line: SheetLine) -> str | None:
+        """The text typing starts from; None where the line cannot be typed, which is said."""
+        if self.store.read_only is not None:
+            self.say(f"read only: {self.store.read_only}")
+            return None
+        field = line.field
+        if field.form == "note":
+            self.open_note(line)
+            return None
+        draft = self.store.member_drafts(self.member_id).get(field.key)
+        if draft is not None:
+            return draft
+        raw = raw_of(self.store.members[self.member_id], field)
+        if not whole(raw, field):
+            self.say("the record holds more here than this line can show; what is typed replaces it")
+            return ""
+        return to_text(raw, field)
+
+    def watch(self, key: str, text: str) -> tuple[str, str]:
+        """What a text would change: shown at once in the answer; gives its echo and the look of it."""
+        field = BY_KEY[key]
+        data = self.store.members.get(self.member_id)
+        self.why = ""
+        if data is None:
+            return "", ""
+        if text == self.readings.began and key not in self.store.member_drafts(self.member_id):
+            data_now, look = data, "muted"
+        else:
+            error = problem_of(data, field, text, self.store.state.units)
+            self.why = f"! {refusal(error, field)}" if error is not None else ""
+            if error is not None:
+                self.show_answer(self.store.seen(self.member_id), field.label)
+                self.call_later(self.show_lines)
+                return f"! {clean(error.problem)}", "refused"
+            data_now, look = changed(data, field, text), "strong"
+        seen = self.store.seen(self.member_id, data_now)
+        others = {k: t for k, t in self.store.member_drafts(self.member_id).items() if k != key}
+        form = lines(data_now, seen.member, others, self.store.state.units, True)
+        blocked = next((line.field.label for line in form if line.state == "refused"), None)
+        self.show_answer(seen, blocked)
+        self.call_later(self.show_lines)
+        line = next(line for line in form if line.field.key == key)
+        return line.echo, look
+
+    def keep(self, key: str, text: str) -> str | None:
+        """Keep a reading: on disk before the screen says so. Gives why it is refused, or None."""
+        field = BY_KEY[key]
+        data = self.store.members[self.member_id]
+        why = problem_of(data, field, text, self.store.state.units)
+        if why is not None:
+            return refusal(why, field)
+        raw = to_raw(text, field)
+        self.store.keep_draft(self.member_id, key, None)
+        self.store.flush_drafts()
+        if raw != raw_of(data, field):
+            event = {"set": "member", "id": self.member_id, "path": list(field.path), "data": raw}
+            try:
+                self.told(self.store.change(event))
+            except NotKeptError as error:
+                self.store.keep_draft(self.member_id, key, text)
+                self.say(str(error))
+                return str(error)
+        self.show()
+        return None
+
+    def leave(self, key: str, text: str) -> None:
+        """Keep a text that is left behind as a draft."""
+        self.store.keep_draft(self.member_id, key, text)
+        failed = self.store.flush_drafts()
+        self.message = failed or f"{BY_KEY[key].label} is not kept; its text is offered again"
+        self.show()
+
+    def told(self, saved: Saved, words: str = "") -> None:
+        """Say what became of a change."""
+        self.status = saved.words
+        notices = self.store.notices()
+        self.message = clean("; ".join([words, *notices] if words else notices), longest=400)
+
+    def keep_typed_draft(self) -> None:
+        """Keep the text being typed as a draft on disk."""
+        line = self.readings.current
+        if self.readings.typing and line is not None and self.readings.line.value != self.readings.began:
+            self.store.keep_draft(self.member_id, line.field.key, self.readings.line.value)
+            failed = self.store.flush_drafts()
+            if failed is not None:
+                self.say(failed)
+
+    def action_pick(self) -> None:
+        """Pick a known name for the line being typed."""
+        from tui.screens.pick import PickScreen
+
+        line = self.readings.current
+        names = choices(line.field, self.store.members[self.member_id]) if line is not None else []
+        if line is None or not names:
+            self.say("this line has no list to pick from")
+            return
+
+        def picked(name: str | None) -> None:
+            if name is not None:
+                self.readings.line.value = name
+                self.readings.line.cursor_position = len(name)
+            self.set_focus(self.readings.line)
+
+        self.app.push_screen(PickScreen(line.field.label, names, self.readings.line.value), picked)
+
+    def open_note(self, line: SheetLine) -> None:
+        """Type the remarks."""
+        from tui.screens.note import NoteScreen
+
+        field = line.field
+        raw = raw_of(self.store.members[self.member_id], field)
+        before = to_text(raw, field)
+        text = self.store.member_drafts(self.member_id).get(field.key, before)
+
+        def closed(result: tuple[str, bool] | None) -> None:
+            if result is None or result[0] == before:
+                self.store.keep_draft(self.member_id, field.key, None)
+                self.show()
+            elif result[1]:
+                self.keep(field.key, result[0])
+            else:
+                self.leave(field.key, result[0])
+
+        self.app.push_screen(NoteScreen(f"{clean(self.member_id, longest=100)}  remarks", text), closed)
