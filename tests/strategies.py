@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import json
 from collections.abc import Callable
 from typing import Any
 
@@ -9,10 +10,10 @@ from hypothesis import strategies as st
 
 from assess import quantities as q
 from assess.quantities import Quantity
-from tests.hostile_texts import bad_texts, free_texts
+from tests.hostile_texts import bad_texts, free_texts, hostile_texts
 from tests.typed_readings import Draw, typed
 
-__all__ = ["bad_texts", "members"]
+__all__ = ["bad_texts", "hostile_texts", "members", "sites"]
 
 Data = dict[str, Any]
 
@@ -136,6 +137,11 @@ def members(draw: Draw, units: str = "US") -> Data:
             st.sampled_from(({"kind": "seat"}, {"kind": "fasteners", "de": read(depth * 0.8, q.SIZE)}))
         )
     return data
+
+
+def sites(units: str = "US") -> st.SearchStrategy[Data]:
+    """Data of members that can be assessed, as a session file gives it back: through JSON text."""
+    return members(units=units).map(lambda data: json.loads(json.dumps(data)))
 
 
 def _size(draw: Draw, read: Any) -> tuple[Data, float, float]:

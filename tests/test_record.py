@@ -6,7 +6,7 @@ import json
 from typing import Any
 
 import pytest
-from hypothesis import Phase, find, given, settings
+from hypothesis import Phase, given, settings
 from hypothesis import strategies as st
 
 from assess import assess
@@ -37,7 +37,7 @@ def test_every_form_of_a_field_is_read_and_written_back_as_typed(name: str) -> N
             assert to_json(read_bay({name: value})) == {name: value}
 
 
-@settings(max_examples=120, derandomize=True, deadline=None)
+@settings(max_examples=80, derandomize=True, deadline=None)
 @given(units=st.sampled_from(("US", "SI")), data=st.data())
 def test_reading_a_member_and_writing_it_back_changes_nothing(units: str, data: st.DataObject) -> None:
     given_data = data.draw(members(units=units))
@@ -48,25 +48,31 @@ def test_reading_a_member_and_writing_it_back_changes_nothing(units: str, data: 
     assert member.missing() == []
 
 
-DRAWN = settings(max_examples=1000, derandomize=True, database=None, deadline=None, phases=[Phase.generate])
+@pytest.fixture(scope="module")
+def drawn() -> list[dict[str, Any]]:
+    found: list[dict[str, Any]] = []
+
+    @settings(max_examples=150, derandomize=True, database=None, deadline=None, phases=[Phase.generate])
+    @given(members())
+    def draw(data: dict[str, Any]) -> None:
+        found.append(data)
+
+    draw()
+    assert len(found) >= 135  # nothing is filtered away
+    return found
 
 
 @pytest.mark.parametrize("name", sorted(FIELDS))
-def test_members_are_drawn_with_every_field(name: str) -> None:
-    assert find(members(), lambda data: name in data, settings=DRAWN)[name] is not None
+def test_members_are_drawn_with_every_field(drawn: list[dict[str, Any]], name: str) -> None:
+    assert any(data.get(name) is not None for data in drawn)
 
 
-def test_many_of_the_members_drawn_are_overstressed_and_many_are_not() -> None:
-    ratios: list[float | None] = []
-
-    @settings(DRAWN, max_examples=100)
-    @given(members())
-    def draw(data: dict[str, Any]) -> None:
-        ratios.append(assess(read_member(data)).ratio)
-
-    draw()
-    over = sum(ratio is None or ratio > 1.0 for ratio in ratios)
-    assert len(ratios) / 5 <= over <= len(ratios) * 4 / 5
+def test_many_of_the_members_drawn_are_overstressed_and_many_are_not(drawn: list[dict[str, Any]]) -> None:
+    findings = [assess(read_member(data)) for data in drawn[:100]]
+    over = sum(finding.ratio is None or finding.ratio > 1.0 for finding in findings)
+    assert len(findings) / 5 <= over <= len(findings) * 4 / 5
+    assert sum(finding.verdict != "adequate" for finding in findings) >= len(findings) / 5
+    assert any(finding.verdict == "adequate" for finding in findings)
 
 
 @pytest.mark.parametrize(

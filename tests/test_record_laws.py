@@ -15,7 +15,7 @@ from assess.finding import Finding
 from assess.reading import Reading
 from assess.record import read_member, to_json
 from assess.record_fields import Record
-from tests.strategies import members
+from tests.strategies import members, sites
 
 DRAWN = settings(max_examples=60, derandomize=True, database=None, deadline=None, phases=[Phase.generate])
 VERDICTS = {"adequate", "inadequate", "undetermined"}
@@ -61,7 +61,7 @@ def metric(value: Any, written: Any) -> Any:
 @settings(DRAWN, max_examples=100)
 @given(units=st.sampled_from(("US", "SI")), data=st.data())
 def test_a_member_that_lacks_nothing_gets_a_finding_that_json_can_hold(units: str, data: st.DataObject) -> None:
-    finding = found(data.draw(members(units=units)), units)
+    finding = found(data.draw(sites(units=units)), units)
     assert finding.verdict in VERDICTS
     assert json.loads(json.dumps(finding.to_json(), allow_nan=False))["verdict"] == finding.verdict
     # hostile inputs N6: never adequate with a ratio over one or without one

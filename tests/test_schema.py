@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import json
+from pathlib import Path
 from typing import Any
 
 import jsonschema
@@ -13,6 +14,7 @@ from assess.schema import session_line_schema
 from tests.record_forms import FIELDS, JOIST
 from tests.strategies import members
 
+DEMO = Path(__file__).resolve().parent.parent / "tui" / "data" / "demo.survey"
 HEADER = {"willcarry": 1, "site": "x", "inspector": "y", "opened": "2026-03-02T08:40:00Z", "units": "US"}
 STAMP = {"n": 1, "from": "k3f9x7q2m4ab", "at": "2026-03-02T08:52:11Z", "by": "T2", "crc": "5d1c0a77"}
 
@@ -50,6 +52,13 @@ def test_every_form_of_a_field_fits_the_schema(schema: jsonschema.Draft202012Val
     for value in FIELDS[name]:
         schema.validate({"put": "member", "id": "a", "data": {name: value}})
         schema.validate({"set": "member", "id": "a", "path": [name], "data": value})
+
+
+def test_every_line_of_the_demo_survey_fits_the_schema(schema: jsonschema.Draft202012Validator) -> None:
+    lines = DEMO.read_text(encoding="utf-8").splitlines()
+    assert len(lines) > 10
+    for line in lines:
+        schema.validate(json.loads(line))
 
 
 @settings(max_examples=25, derandomize=True, deadline=None)
