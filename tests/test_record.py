@@ -37,7 +37,7 @@ def test_every_form_of_a_field_is_read_and_written_back_as_typed(name: str) -> N
             assert to_json(read_bay({name: value})) == {name: value}
 
 
-@settings(max_examples=80, derandomize=True, deadline=None)
+@settings(max_examples=50, derandomize=True, deadline=None)
 @given(units=st.sampled_from(("US", "SI")), data=st.data())
 def test_reading_a_member_and_writing_it_back_changes_nothing(units: str, data: st.DataObject) -> None:
     given_data = data.draw(members(units=units))
@@ -52,13 +52,13 @@ def test_reading_a_member_and_writing_it_back_changes_nothing(units: str, data: 
 def drawn() -> list[dict[str, Any]]:
     found: list[dict[str, Any]] = []
 
-    @settings(max_examples=150, derandomize=True, database=None, deadline=None, phases=[Phase.generate])
+    @settings(max_examples=100, derandomize=True, database=None, deadline=None, phases=[Phase.generate])
     @given(members())
     def draw(data: dict[str, Any]) -> None:
         found.append(data)
 
     draw()
-    assert len(found) >= 135  # nothing is filtered away
+    assert len(found) >= 90  # nothing is filtered away
     return found
 
 
@@ -68,7 +68,7 @@ def test_members_are_drawn_with_every_field(drawn: list[dict[str, Any]], name: s
 
 
 def test_many_of_the_members_drawn_are_overstressed_and_many_are_not(drawn: list[dict[str, Any]]) -> None:
-    findings = [assess(read_member(data)) for data in drawn[:100]]
+    findings = [assess(read_member(data)) for data in drawn]
     over = sum(finding.ratio is None or finding.ratio > 1.0 for finding in findings)
     assert len(findings) / 5 <= over <= len(findings) * 4 / 5
     assert sum(finding.verdict != "adequate" for finding in findings) >= len(findings) / 5

@@ -17,7 +17,7 @@ from assess.record import read_member, to_json
 from assess.record_fields import Record
 from tests.strategies import members, sites
 
-DRAWN = settings(max_examples=60, derandomize=True, database=None, deadline=None, phases=[Phase.generate])
+DRAWN = settings(max_examples=40, derandomize=True, database=None, deadline=None, phases=[Phase.generate])
 VERDICTS = {"adequate", "inadequate", "undetermined"}
 
 # 25.4 mm an inch and 4.4482216152605 N a pound, exact by definition (NIST SP 811); never by the program's own factors.
@@ -58,7 +58,7 @@ def metric(value: Any, written: Any) -> Any:
     return written
 
 
-@settings(DRAWN, max_examples=100)
+@settings(DRAWN, max_examples=60)
 @given(units=st.sampled_from(("US", "SI")), data=st.data())
 def test_a_member_that_lacks_nothing_gets_a_finding_that_json_can_hold(units: str, data: st.DataObject) -> None:
     finding = found(data.draw(sites(units=units)), units)
