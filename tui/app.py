@@ -228,9 +228,9 @@ class Willcarry(AheadApp[int]):
 def draws_plain(environment: dict[str, str] | None = None) -> bool:
     """Whether the terminal's locale has no line drawing: then figures are ASCII.
 
-    >>> draws_plain({"LANG": "C"}), draws_plain({"LC_ALL": "en_GB.UTF-8"}), draws_plain({})
+    >>> draws_plain({"LANG": "C", "LC_CTYPE": "C.UTF-8"}), draws_plain({"LC_ALL": "en_GB.UTF-8"}), draws_plain({})
     (True, False, False)
     """
     held = os.environ if environment is None else environment
-    said = held.get("LC_ALL") or held.get("LC_CTYPE") or held.get("LANG") or "utf-8"
+    said = held.get("LC_ALL") or held.get("LANG") or "utf-8"  # LC_CTYPE is Python's own, where the locale is C
     return "utf" not in said.lower()
