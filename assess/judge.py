@@ -212,7 +212,8 @@ def _check(checked: Checked, row: int, combination: int) -> Check:
 
     def pick(values: Array) -> float:
         K, C, n = values.shape
-        return float(values[row if K > 1 else 0, combination if C > 1 else 0, place if n > 1 else 0])
+        number: float = values.item(row if K > 1 else 0, combination if C > 1 else 0, place if n > 1 else 0)
+        return number
 
     none = checked.governs_none is not None
     return Check(

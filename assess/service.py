@@ -96,6 +96,7 @@ def deflection(
     factor = np.array([row.get(env.asked, 0.0) for _, row in sets])[:, None]
     unit_high = factor * effects.unit[0][:, None, y]
     unit_low = factor * effects.unit[1][:, None, y]
+    rises = bool((base_low < 0.0).any() or (unit_low < 0.0).any() or (effects.sums["dead"][0][:, y] < 0.0).any())
     K_cr = KCR_WET if scenario.wet else KCR_DRY
     dead = effects.sums["dead"][0][:, None, y]
     length = _reference_length(mesh)[:, None, :]
@@ -106,19 +107,21 @@ def deflection(
     ):
         if trace is not None:
             trace.scope = name
-        high, low = base_high + env.size * unit_high, base_low + env.size * unit_low
+        high = base_high + env.size * unit_high
+        low = base_low + env.size * unit_low if rises else high
         limit = deflection_limit.on(trace, length, divisor)
         at_base_high, at_base_low = base_high, base_low
         if trace is not None:
             trace.value("y_live", high, "in", "statics", "deflection under the live set")
         if name == "total deflection":
             high = long_term.on(trace, K_cr, dead, high)
-            low = long_term(K_cr, dead, low)
-            at_base_high, at_base_low = base_high + K_cr * dead, base_low + K_cr * dead
-        upward = bool((low < 0.0).any())
-        demand = np.maximum(high, -low) if upward else high
+            at_base_high = base_high + K_cr * dead
+            if rises:
+                low = long_term(K_cr, dead, low)
+                at_base_low = base_low + K_cr * dead
+        demand = np.maximum(high, -low) if rises else high
         room, per_unit = limit - at_base_high, unit_high
-        if upward:
+        if rises:
             room = np.concatenate([room, limit + at_base_low], axis=2)
             per_unit = np.concatenate([per_unit, -unit_low], axis=2)
         prefix = "" if name == "live deflection" else f"{K_cr:g}D+"
@@ -147,9 +150,11 @@ def _sum(sums: dict[str, tuple[Array, Array]], row: dict[str, float], asked: str
 
 
 def _reference_length(mesh: Mesh) -> Array:
-    """Length each station's deflection is compared with: its span, or twice its overhang [K, N] [in]."""
+    """Length each station's deflection is compared with: its span, or twice its overhang [K, N] or [K, 1] [in]."""
     K = mesh.x.shape[0]
     supports = mesh.supports_in
+    if mesh.lengths == 1:
+        return supports[:, 1:] - supports[:, :1]
     left, right = supports[:, :1] - mesh.x[:, :1], mesh.x[:, -1:] - supports[:, -1:]
     lengths = supports[:, 1:] - supports[:, :-1]
     if bool((left > 0).all()):
