@@ -89,23 +89,32 @@ def as_json(
         for item in found:
             if item.finding is None or item.member is None:
                 continue
-            entry: dict[str, Any] = {"id": item.id, "file": file.path, "where": item.member.where}
+            entry: dict[str, Any] = {"id": item.id, "file": printable(file.path), "where": item.member.where}
             entry |= item.finding.to_json()
             if steps is not None:
                 entry["working"] = [step_json(step) for step in steps.get((file.path, item.id), [])]
             members.append(entry)
         for problem in (*file.problems, *state.problems, *(i.problem for i in found if i.problem is not None)):
             problems.append(
-                {"file": file.path, "line": problem.line, "id": problem.id or None, "field": problem.field or None,
+                {"file": printable(file.path), "line": problem.line, "id": problem.id or None, "field": problem.field or None,
                  "message": problem.message}
             )  # fmt: skip
     return {
         "willcarry": version("willcarry"),
         "basis": BASIS,
-        "sessions": [{"file": file.path, "site": file.header.get("site")} for file, _, _ in sessions],
+        "sessions": [{"file": printable(file.path), "site": file.header.get("site")} for file, _, _ in sessions],
         "members": members,
         "problems": problems,
     }
+
+
+def printable(path: str) -> str:
+    """A file's name as text that can be written: bytes that are no UTF-8 become replacement marks.
+
+    >>> printable("a\\udcffb.survey")
+    'a\ufffdb.survey'
+    """
+    return path.encode("utf-8", "surrogateescape").decode("utf-8", "replace")
 
 
 def step_json(step: Step) -> dict[str, Any]:

@@ -277,3 +277,19 @@ def test_plain_output_where_the_terminal_can_do_little() -> None:
     assert done.returncode == exits.NOT_ADEQUATE
     assert b"Traceback" not in done.stderr
     done.stdout.decode("ascii")
+
+
+@pytest.mark.parametrize(
+    "name", [b"a\xffb.survey", b"-x.survey", b"a\nb.survey", "\u202egpj.survey".encode(), b"[b].survey"]
+)
+def test_odd_file_names_work_or_are_told_cleanly(tmp_path: Path, name: bytes) -> None:
+    path = os.path.join(os.fsencode(tmp_path), name)
+    with open(path, "wb") as file:
+        file.write(Path(session(tmp_path, put("J-1"))).read_bytes())
+    program = os.fsencode(Path(sys.executable).parent / "willcarry")
+    for words in ([b"assess", path], [b"assess", path, b"--json"], [b"check", path]):
+        done = subprocess.run([program, *words], capture_output=True, timeout=30, check=False)
+        assert done.returncode == exits.ADEQUATE, done.stderr
+        shown = done.stdout.decode("utf-8")
+        assert "\u202e" not in shown
+        assert b"Traceback" not in done.stderr

@@ -65,7 +65,8 @@ def assess_files(paths: list[str], only: str | None, as_data: bool, explained: b
                     steps[file.path, item.id] = explain(whole_member(state, item.id))[1]
     if as_data:
         data = as_json(sessions, steps if explained else None)
-        sys.stdout.write(json.dumps(data, ensure_ascii=False, allow_nan=False, indent=1) + "\n")
+        # ASCII alone: a name in the data must not reach a terminal as a control character.
+        sys.stdout.write(json.dumps(data, allow_nan=False, indent=1) + "\n")
     else:
         for file, _, found in sessions:
             _print(file, found, steps if explained else None)
