@@ -293,3 +293,14 @@ def test_odd_file_names_work_or_are_told_cleanly(tmp_path: Path, name: bytes) ->
         shown = done.stdout.decode("utf-8")
         assert "\u202e" not in shown
         assert b"Traceback" not in done.stderr
+
+
+def test_a_foreign_package_in_the_way_is_named(tmp_path: Path) -> None:
+    (tmp_path / "species").mkdir()
+    (tmp_path / "species" / "__init__.py").write_text("", encoding="utf-8")
+    code = "import sys; sys.path.insert(0, '.'); from tui.command import main; sys.exit(main(['wood']))"
+    done = subprocess.run(
+        [sys.executable, "-c", code], capture_output=True, text=True, cwd=tmp_path, timeout=30, check=False
+    )
+    assert done.returncode == exits.BAD_INPUT
+    assert "'species'" in done.stderr

@@ -78,6 +78,12 @@ def _dispatch(words: list[str]) -> int:
 
         sys.stdout.write(f"willcarry {version('willcarry')}\n")
         return exits.ADEQUATE
+    foreign = _foreign()
+    if foreign is not None:
+        sys.stderr.write(
+            f"willcarry: another package named {foreign!r} stands in the way of ours; accepted: an environment of its own\n"
+        )
+        return exits.BAD_INPUT
     if words and words[0] in COMMANDS:
         from importlib import import_module
 
@@ -96,6 +102,19 @@ def _dispatch(words: list[str]) -> int:
     from tui.commands.interface import run
 
     return run(words)
+
+
+def _foreign() -> str | None:
+    """The name of one of our packages that another has replaced, or None."""
+    import assess
+    import species
+
+    ours = os.path.dirname(os.path.dirname(os.path.abspath(__file__)))
+    for package in (assess, species):
+        place = getattr(package, "__file__", None)
+        if place is None or os.path.dirname(os.path.dirname(os.path.abspath(place))) != ours:
+            return package.__name__
+    return None
 
 
 def _details(error: Exception) -> str:
