@@ -81,7 +81,7 @@ def _dispatch(words: list[str]) -> int:
     foreign = _foreign()
     if foreign is not None:
         sys.stderr.write(
-            f"willcarry: another package named {foreign!r} stands in the way of ours; accepted: an environment of its own\n"
+            f"willcarry: another package named {foreign!r} stands in ours' way; install willcarry alone\n"
         )
         return exits.BAD_INPUT
     if words and words[0] in COMMANDS:
