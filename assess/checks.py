@@ -110,6 +110,8 @@ def bending(
         first, last = S_segment[:, :1], S_segment[:, -1:]
         S_segment = np.minimum(np.concatenate([first, S_segment], axis=1), np.concatenate([S_segment, last], axis=1))
     S = S_segment[:, None, :]
+    if trace is not None and scenario.losses:
+        trace.value("S", S, "in3", "what is left of the section here", "section modulus at the weaker extreme fibre")
     M = env.layout.M
     found = []
     uniform = uniform_only(scenario, env)

@@ -12,7 +12,7 @@ from assess.effects import Effects, effects
 from assess.envelope import Envelope, envelope
 from assess.mesh import Mesh, mesh
 from assess.scenario import Scenario
-from assess.section import Section, circle, net_rectangle
+from assess.section import Section, area, circle, net_rectangle, second_moment, section_modulus
 from assess.share import added, shares, taken
 from assess.trace import Array, Trace
 from assess.variants import PartRows, Rows, variants
@@ -128,7 +128,13 @@ def gross(part: PartRows, trace: Trace | None = None) -> Section:
     if trace is not None:
         trace.value("b", b, "in", "readings", "diameter" if part.round else "breadth of all plies")
         trace.value("d", d, "in", "readings", "depth in the direction of load")
-    return circle(d) if part.round else net_rectangle(b, d, np.zeros_like(b), np.zeros_like(b), np.zeros_like(b), ())
+    if part.round:
+        return circle(d)
+    if trace is not None:
+        area.on(trace, b, d)
+        section_modulus.on(trace, b, d)
+        second_moment.on(trace, b, d)
+    return net_rectangle(b, d, np.zeros_like(b), np.zeros_like(b), np.zeros_like(b), ())
 
 
 def net(scenario: Scenario | None, part: PartRows, stations: Mesh) -> Section:

@@ -9,7 +9,8 @@ from math import pi
 import numpy as np
 from numpy.typing import NDArray
 
-Array = NDArray[np.float64]
+from assess.trace import Array, formula
+
 Hole = tuple[Array, Array, NDArray[np.bool_]]
 
 SLIVER = 1e-9  # in; thinner strips between holes are rounding of the holes' edges
@@ -116,12 +117,29 @@ def _strips(low: Array, high: Array, at: tuple[NDArray[np.intp], ...], holes: Se
     return floor, left
 
 
+@formula("A", "in2", "engineering basis 1")
+def area(b: Array, d: Array) -> Array:
+    """Area of the whole rectangle."""
+    return b * d
+
+
+@formula("S", "in3", "engineering basis 1")
+def section_modulus(b: Array, d: Array) -> Array:
+    """Section modulus of the whole rectangle."""
+    return b * d**2 / 6
+
+
+@formula("I", "in4", "engineering basis 1")
+def second_moment(b: Array, d: Array) -> Array:
+    """Moment of inertia of the whole rectangle."""
+    return b * d**3 / 12
+
+
 def _whole(b: Array, d: Array, shape: tuple[int, ...]) -> Section:
     """The rectangle that has lost nothing, at every place."""
-    A = b * d
-    S = A * d / 6.0
+    S = section_modulus(b, d)
     values = np.empty((7, *shape))
-    for row, value in zip(values, (A, S * d / 2.0, S, S, d / 2.0, b, d), strict=True):
+    for row, value in zip(values, (area(b, d), second_moment(b, d), S, S, d / 2.0, b, d), strict=True):
         row[:] = value
     return Section(*values)
 

@@ -95,10 +95,8 @@ def as_json(
                 entry["working"] = [step_json(step) for step in steps.get((file.path, item.id), [])]
             members.append(entry)
         for problem in (*file.problems, *state.problems, *(i.problem for i in found if i.problem is not None)):
-            problems.append(
-                {"file": printable(file.path), "line": problem.line, "id": problem.id or None, "field": problem.field or None,
-                 "message": problem.message}
-            )  # fmt: skip
+            where = {"file": printable(file.path), "line": problem.line, "id": problem.id or None}
+            problems.append(where | {"field": problem.field or None, "message": problem.message})
     return {
         "willcarry": version("willcarry"),
         "basis": BASIS,
