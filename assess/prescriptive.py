@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from itertools import pairwise
+from math import hypot
 
 from assess.finding import Check
 from assess.scenario import Loss, Scenario
@@ -32,20 +33,32 @@ def prescriptive(scenario: Scenario) -> tuple[Check, ...]:
 
 def _notch(scenario: Scenario, loss: Loss, d: float, b: float) -> list[Check]:
     depth, length = max(loss.top_in, loss.bottom_in), loss.to_in - loss.from_in
-    if end_reach(scenario, loss) is not None:
-        return [_most(f"{loss.name}: end notch depth", depth, d / 4, loss.from_in)]
-    found = [
-        _most(f"{loss.name}: depth", depth, d / 6, loss.from_in),
-        _most(f"{loss.name}: length", length, d / 3, loss.from_in),
-    ]
-    supports = scenario.supports_in
-    for start, end in pairwise(supports):
+    at_end = end_reach(scenario, loss) is not None
+    if at_end:
+        found = [_most(f"{loss.name}: end notch depth", depth, d / 4, loss.from_in)]
+    else:
+        found = [
+            _most(f"{loss.name}: depth", depth, d / 6, loss.from_in),
+            _most(f"{loss.name}: length", length, d / 3, loss.from_in),
+        ]
+    for start, end in pairwise(scenario.supports_in):
         third = (end - start) / 3
         if loss.to_in > start + third and loss.from_in < end - third:
             found.append(_never(f"{loss.name}: in the middle third", depth, loss.from_in))
-    if loss.bottom_in > 0.0 and b >= THICK_IN:
+    if not at_end and b >= THICK_IN and _tension_face(scenario, loss):
         found.append(_never(f"{loss.name}: on the tension face", depth, loss.from_in))
     return found
+
+
+def _tension_face(scenario: Scenario, loss: Loss) -> bool:
+    """Whether a notch is on the face that loads pull: the bottom in spans, the top over inner supports and outside."""
+    supports = scenario.supports_in
+    if loss.bottom_in > 0.0:
+        return loss.to_in > 0.0 and loss.from_in < supports[-1]
+    outside = (loss.from_in < 0.0 and scenario.overhang_left_in > 0.0) or (
+        loss.to_in > supports[-1] and scenario.overhang_right_in > 0.0
+    )
+    return outside or any(loss.from_in < support < loss.to_in for support in supports[1:-1])
 
 
 def _hole(scenario: Scenario, loss: Loss, d: float) -> list[Check]:
@@ -57,10 +70,22 @@ def _hole(scenario: Scenario, loss: Loss, d: float) -> list[Check]:
     ]
     for other in scenario.losses:
         if other is not loss and other.kind in ("hole", "notch"):
-            gap = max(other.from_in - loss.to_in, loss.from_in - other.to_in)
+            gap = _gap(loss, other, d)
             if gap < CLEAR_IN:
                 found.append(_least(f"{loss.name}: clear of {other.name}", max(gap, 0.0), CLEAR_IN, centre))
     return found
+
+
+def _gap(hole: Loss, other: Loss, d: float) -> float:
+    """Wood between a hole and another hole or a notch, the shortest way [in]; below 0 where they meet."""
+    centre = (hole.from_in + hole.to_in) / 2
+    if other.kind == "hole":
+        along, across = centre - (other.from_in + other.to_in) / 2, hole.height_in - other.height_in
+        return hypot(along, across) - (hole.diameter_in + other.diameter_in) / 2
+    along = max(other.from_in - centre, centre - other.to_in, 0.0)
+    floor, roof = (0.0, other.bottom_in) if other.bottom_in > 0.0 else (d - other.top_in, d)
+    across = max(floor - hole.height_in, hole.height_in - roof, 0.0)
+    return hypot(along, across) - hole.diameter_in / 2
 
 
 def _most(what: str, measured: float, limit: float, at_in: float) -> Check:

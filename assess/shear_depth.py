@@ -13,6 +13,9 @@ from assess.section import Section
 from assess.trace import Array, Trace, formula
 from assess.variants import PartRows
 
+NEAR_END = 5.0  # depths from the member's end within which fasteners count as at it
+ROUNDING_IN = 1e-9
+
 
 @formula("dv", "in", "NDS 3.4.3.2(a) (3.4-3)")
 def tension_notch(dn: Array, d: Array) -> Array:
@@ -53,32 +56,43 @@ def shear_depth(
 
     section   what is left in each segment [K, N-1] or [K, 1]
     returns   depth with which 2/3 Fv' b dv is the shear the segment carries
+              (beside every support where fasteners hang the member)
     source    NDS 2018 3.4.3.2, 3.4.3.3; which face is in tension follows the sign of the moment in the combination
     """
     K, N1 = mesh.mid.shape
     d = part.depth_in[:, None, None]
     dn = np.broadcast_to(section.d_net, (K, N1))[:, None, :]
     depth = np.broadcast_to(dn, (K, len(env.combinations), N1))
-    for loss in scenario.losses:
-        if loss.kind != "notch":
-            continue
-        inside = ((mesh.mid > loss.from_in) & (mesh.mid < loss.to_in))[:, None, :]
-        tension = _in_tension(env, bottom=loss.bottom_in > 0.0)
+    notches = [loss for loss in scenario.losses if loss.kind == "notch"]
+    # What a compression notch gives back comes first: every other rule then takes off what it must.
+    for loss in notches:
         reach = end_reach(scenario, loss)
-        if reach is not None and loss.top_in > 0.0:
-            allowed = compression_notch.on(trace, d, dn, np.full((1, 1, 1), reach))
-            depth = where(inside & ~tension, allowed, depth)
-        depth = where(inside & tension, minimum(depth, tension_notch.on(trace, dn, d)), depth)
+        if reach is None or loss.top_in == 0.0:
+            continue
+        # The equation is for a notch and nothing else: where more is gone, no depth is given back.
+        alone = np.abs(dn - (d - loss.top_in)) < ROUNDING_IN
+        given = _inside(mesh, loss) & ~_in_tension(env, bottom=False) & alone
+        allowed = compression_notch.on(trace, d, dn, np.full((1, 1, 1), reach))
+        depth = where(given, allowed, depth)
+    for loss in notches:
+        pulled = _inside(mesh, loss) & _in_tension(env, bottom=loss.bottom_in > 0.0)
+        depth = where(pulled, minimum(depth, tension_notch.on(trace, dn, d)), depth)
     start, end = mesh.x[:, :1], mesh.x[:, -1:]
     for split in scenario.splits:
-        near = mesh.mid < start + split.length_in if split.end == "left" else mesh.mid > end - split.length_in
-        left = np.minimum(split.remaining_in, d)
+        # A segment the split reaches into at all is split: the split's end need not be a station.
+        if split.end == "left":
+            near = mesh.x[:, :-1] < start + split.length_in
+        else:
+            near = mesh.x[:, 1:] > end - split.length_in
+        left = minimum(split.remaining_in, dn)
         depth = where(near[:, None, :], minimum(depth, tension_notch.on(trace, left, d)), depth)
     if scenario.hung_de_in is not None:
-        hung = hung_by_fasteners.on(trace, np.minimum(scenario.hung_de_in, d), d)
-        for at in (start, end):
-            near = np.abs(mesh.mid - at) < part.depth_in[:, None]
-            depth = where(near[:, None, :], minimum(depth, hung), depth)
+        de = minimum(scenario.hung_de_in, dn)
+        hung = hung_by_fasteners.on(trace, de, d)
+        for support in mesh.supports_in.T[:, :, None]:
+            beside = np.abs(mesh.mid - support) < part.depth_in[:, None]
+            at_end = np.minimum(support - start, end - support) < NEAR_END * part.depth_in[:, None]
+            depth = where(beside[:, None, :], minimum(depth, where(at_end[:, None, :], hung, de)), depth)
     return depth
 
 
@@ -90,6 +104,12 @@ def end_reach(scenario: Scenario, loss: Loss) -> float | None:
     if scenario.overhang_right_in == 0.0 and loss.to_in >= supports[-1] - scenario.face_in[-1]:
         return max(supports[-1] - scenario.face_in[-1] - loss.from_in, 0.0)
     return None
+
+
+def _inside(mesh: Mesh, loss: Loss) -> NDArray[np.bool_]:
+    """Segments that lie in a loss [K, 1, N-1]."""
+    inside: NDArray[np.bool_] = (mesh.mid > loss.from_in) & (mesh.mid < loss.to_in)
+    return inside[:, None, :]
 
 
 def _in_tension(env: Envelope, bottom: bool) -> NDArray[np.bool_]:
