@@ -29,14 +29,14 @@ def I_left(losses: tuple[Loss, ...], at: Fraction) -> Fraction:
     here = [loss for loss in losses if loss.from_in < at < loss.to_in]
     low = max([Fraction(loss.bottom_in) for loss in here], default=Fraction(0))
     high = D - max([Fraction(loss.top_in) for loss in here], default=Fraction(0))
-    b = B - max([Fraction(loss.side_in) for loss in here], default=Fraction(0))
+    b: Fraction = B - max([Fraction(loss.side_in) for loss in here], default=Fraction(0))
     strips = [(low, high)]
     for loss in here:
         if loss.diameter_in:
             centre, radius = Fraction(loss.height_in), Fraction(loss.diameter_in) / 2
             strips = [(low, centre - radius), (centre + radius, high)]
     area = sum((e - s) * b for s, e in strips)
-    axis = sum((e - s) * b * (e + s) / 2 for s, e in strips) / area
+    axis = Fraction(sum((e - s) * b * (e + s) / 2 for s, e in strips) / area)
     total = Fraction(0)
     for s, e in strips:
         height, arm = e - s, (e + s) / 2 - axis
@@ -102,7 +102,7 @@ def test_a_half_depth_char_by_a_closed_form() -> None:
     # I2 over the middle half, I1 outside, from M = w x (L - x)/2:
     # y = w L^4/E (5/384/I2 + (1/I1 - 1/I2) k), k = 2 integral_0^(1/4) xi^2 (1 - xi)/4 = 13/6144
     char = Loss("char 1", "char", 40.0, 120.0, bottom_in=4.625)
-    I1 = B * D**3 / 12
+    I1 = B * D * D * D / 12
     I2 = I1 / 8
     y = DEAD * 160**4 / E_PSI * (Fraction(5, 384) / I2 + (1 / I1 - 1 / I2) * Fraction(13, 6144))
     assert dead_deflections(scenario(losses=(char,)))[80.0] == pytest.approx(float(y), rel=1e-9)
