@@ -11,6 +11,7 @@ from assess.checks import Checked, finish, names
 from assess.envelope import Envelope, note_sum
 from assess.mesh import Mesh
 from assess.scenario import Scenario
+from assess.section import Section
 from assess.trace import Array, Trace, formula
 from assess.variants import PartRows, Rows
 
@@ -40,6 +41,7 @@ def bearing(
     rows: Rows,
     env: Envelope,
     mesh: Mesh,
+    section: Section,
     part: PartRows,
     f: Factors,
     trace: Trace | None = None,
@@ -57,16 +59,31 @@ def bearing(
     Cb = np.where(inner, bearing_area_factor(lb), 1.0)
     shape = (rows.count, 1, 1)
     value = adjust.Fc_perp_prime.on(trace, part.wood("Fc_perp").reshape(shape), f.CM_Fc, f.Ct, f.Ci_c, Cb)
-    b = part.breadth_in.reshape(shape)
-    demand = bearing_stress.on(trace, env.high(R), b, lb)
+    b = seat_breadth(rows, mesh, section, part)[:, None, :] if scenario.losses else part.breadth_in.reshape(shape)
+    with np.errstate(divide="ignore"):  # nothing may be left over a bearing; that is said as such
+        demand = bearing_stress.on(trace, env.high(R), b, lb)
     ratio = demand / value
     factors = {"CM": f.CM_Fc, "Ct": f.Ct, "Ci": f.Ci_c, "Cb": Cb}
-    lost = [f"bearing at support {support + 1} is not relied on: {why}" for support, why in scenario.lost_bearings]
-    none = f.none or ("; ".join(lost) if lost else None)
+    first = scenario.first_support + 1
+    reasons = [f.none] if f.none is not None else []
+    reasons += [
+        f"bearing at support {support + first} is not relied on: {why}" for support, why in scenario.lost_bearings
+    ]
+    none = "; ".join(reasons) or None
     return finish(
         "bearing", "psi", "NDS 3.10.2", "bearing", names(env), ratio,
         value * b * lb - env.base_high[:, :, R], env.unit_high[:, :, R], demand, value, supports, factors, none,
     )  # fmt: skip
+
+
+def seat_breadth(rows: Rows, mesh: Mesh, section: Section, part: PartRows) -> Array:
+    """Least breadth left over each bearing [K, S] [in]: wood gone from the sides there does not bear."""
+    b = np.broadcast_to(section.b_net, mesh.mid.shape)[:, None, :]
+    half = np.maximum(rows.bearing_in / 2, 0.75)[:, :, None]
+    at = mesh.supports_in[:, :, None]
+    over = (mesh.x[:, None, 1:] > at - half) & (mesh.x[:, None, :-1] < at + half)
+    least: Array = np.minimum(np.where(over, b, np.inf).min(axis=2), part.breadth_in[:, None])
+    return least
 
 
 @formula("lift", "lb", "ASCE 7-16 2.4.1: 0.6D holds down")

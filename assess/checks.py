@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 from numpy.typing import NDArray
@@ -113,6 +113,11 @@ def bending(
     if trace is not None and scenario.losses:
         trace.value("S", S, "in3", "what is left of the section here", "section modulus at the weaker extreme fibre")
     M = env.layout.M
+    # Buckling sideways is resisted by the least breadth anywhere; the standard is silent on weakened sections.
+    held = part
+    if scenario.losses:
+        share = (section.b_net.min(axis=1) / part.breadth_in).clip(1e-6, 1.0)
+        held = replace(part, stability_in=part.stability_in * share)
     found = []
     uniform = uniform_only(scenario, env)
     for sagging in (True, False):
@@ -127,7 +132,7 @@ def bending(
             trace.scope = scope
             sign = "sagging" if sagging else "hogging (negative)"
             note_sum(trace, env, "M", "lb-in", M, sagging, f"{sign} moment at this place")
-        value = adjust.bending_value(scenario, part, f, star, sagging, uniform, mesh.x, mesh.supports_in, trace)
+        value = adjust.bending_value(scenario, held, f, star, sagging, uniform, mesh.x, mesh.supports_in, trace)
         moment = base + env.size * unit
         with np.errstate(divide="ignore", invalid="ignore"):  # nothing may be left of the section
             demand = bending_stress.on(trace, moment, S)

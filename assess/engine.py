@@ -56,7 +56,7 @@ def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
         trace.scope = "weight and stiffness"
     own = own_pli(scenario, rows, part, whole, trace)
     f = adjust.factors(scenario, rows, part, trace)
-    gone = nothing_left(left[0], stations)
+    gone = nothing_left(left[0], stations, scenario.origin_in)
     if gone is not None:
         f = replace(f, none=f.none or gone)
     E = [stiffness(part, f, trace)]
@@ -72,7 +72,7 @@ def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
     strength = [
         *checks.bending(scenario, rows, env, stations, left[0], part, f, trace),
         check_shear.shear(scenario, rows, env, stations, left[0], part, f, trace),
-        check_supports.bearing(scenario, rows, env, stations, part, f, trace),
+        check_supports.bearing(scenario, rows, env, stations, left[0], part, f, trace),
     ]
     lift = check_supports.uplift(scenario, rows, env, stations, trace)
     if lift is not None:
@@ -83,13 +83,13 @@ def compute(scenario: Scenario, trace: Trace | None = None) -> Computed:
     return Computed(rows, stations, env, tuple(strength), gone, live, total, bounce)
 
 
-def nothing_left(section: Section, stations: Mesh) -> str | None:
+def nothing_left(section: Section, stations: Mesh, origin_in: float) -> str | None:
     """Where the section has nothing left, in words, or None."""
     empty = section.A <= 0.0
     if not bool(empty.any()):
         return None
     at = float(stations.mid[np.broadcast_to(empty, stations.mid.shape)].min())
-    return f"nothing is left of the section at {at / 12:.1f} ft: the member is broken there"
+    return f"nothing is left of the section at {(at + origin_in) / 12:.1f} ft: the member is broken there"
 
 
 def stiff_I(scenario: Scenario, rows: Rows, loads: Effects, E: Array, whole: Section) -> Array:
@@ -152,10 +152,11 @@ def net(scenario: Scenario | None, part: PartRows, stations: Mesh) -> Section:
         inside = (stations.mid > loss.from_in) & (stations.mid < loss.to_in)
         top = np.maximum(top, inside * loss.top_in)
         bottom = np.maximum(bottom, inside * loss.bottom_in)
-        side = np.maximum(side, inside * loss.side_in)
+        # Sides of several defects add up: which flank each is on is not recorded.
+        side = side + inside * loss.side_in
         if loss.diameter_in > 0.0:
             holes.append((np.full_like(d, loss.diameter_in), np.full_like(d, loss.height_in), inside))
-    return net_rectangle(b, d, top, bottom, side, tuple(holes))
+    return net_rectangle(b, d, top, bottom, np.minimum(side, b), tuple(holes))
 
 
 def own_pli(scenario: Scenario, rows: Rows, part: PartRows, whole: Section, trace: Trace | None = None) -> Array:

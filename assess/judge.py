@@ -143,7 +143,8 @@ def _dead_fails(computed: Computed, row: int) -> bool:
 def _at(checked: Checked, row: int, combination: int) -> float | None:
     if checked.governs_none is not None:
         return None
-    return float(checked.at_in[row, checked.worst[row, combination]])
+    # Stations stand a rounding apart where a grid place meets an edge; nought has no sign.
+    return round(float(checked.at_in[row, checked.worst[row, combination]]), 9) + 0.0
 
 
 def _live_load(scenario: Scenario, computed: Computed, no_value: bool) -> tuple[LiveLoad, list[str]]:

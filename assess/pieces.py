@@ -37,6 +37,8 @@ def split(scenario: Scenario) -> list[tuple[float, Scenario]]:
                 start,
                 replace(
                     scenario,
+                    first_support=index,
+                    origin_in=start,
                     spans_in=(span,),
                     overhang_left_in=left,
                     overhang_right_in=right,

@@ -145,6 +145,7 @@ class Scenario:
     live         the use that is judged; None for a roof member
     present      the use the building has now, for the change-of-use ratios; None where not given
     snow_psf, roof_live_psf on the horizontal projection; dead_psf on the projection too
+    first_support, origin_in   where a piece of a member over several supports begins, for words that name a place
     new_work     True where the planned work itself cuts the member
     lost_bearings  (support from 0, why) for each bearing that is not relied on
     hung_de_in   depth from the unloaded edge to the nearest fastener that hangs the member; None where none does
@@ -194,6 +195,8 @@ class Scenario:
     cautions: tuple[str, ...]
     pending: tuple[str, ...]
     new_work: bool = False
+    first_support: int = 0
+    origin_in: float = 0.0
 
     @property
     def supports_in(self) -> tuple[float, ...]:

@@ -12,7 +12,7 @@ from assess.finding import Finding
 from assess.judge import judge
 from assess.pieces import split, worst
 from assess.reduction import reduction
-from assess.scenario import Edge, LineLoad, PointLoad, Scenario, UseLoad
+from assess.scenario import Edge, LineLoad, Loss, PointLoad, Scenario, UseLoad
 from assess.trace import Trace
 from assess.working import working
 from tests.scenarios import HEM_FIR_2, OFFICES, PLAIN, scenario
@@ -298,3 +298,35 @@ def test_live_load_reduction_by_hand() -> None:
     assert reduced.ratio == pytest.approx(whole.ratio * (10 + 0.78 * 40) / 50, rel=1e-9)
     # the load it can carry is told unreduced
     assert reduced.live_load.strength_psf == pytest.approx(whole.live_load.strength_psf / 0.78, rel=1e-9)
+
+
+def gone(side_in: float, start: float = 0.0, end: float = 160.0) -> Loss:
+    return Loss("char", "char", start, end, side_in=side_in)
+
+
+def test_sides_lost_to_several_defects_add_up() -> None:
+    one, two = scenario(losses=(gone(0.6),)), scenario(losses=(gone(0.3), gone(0.3)))
+    assert find(two).ratio == pytest.approx(find(one).ratio, rel=1e-12)
+
+
+def test_wood_gone_from_the_sides_does_not_bear() -> None:
+    # half the breadth gone over the bearings: twice the stress, 2 x 0.48773
+    assert check(scenario(losses=(gone(0.75),)), "bearing", "D+L") == pytest.approx(
+        2 * check(scenario(), "bearing", "D+L"), rel=1e-12
+    )
+    assert check(scenario(losses=(gone(0.75, 20.0, 140.0),)), "bearing", "D+L") == check(scenario(), "bearing", "D+L")
+
+
+def test_pieces_name_supports_and_places_of_the_whole_member() -> None:
+    lost = scenario(spans_in=(100.0, 90.0, 110.0), separate=True, lost_bearings=((2, "its hanger is corroded"),))
+    merged = worst([(start, find(piece)) for start, piece in split(lost)])
+    said = [caution for caution in merged.cautions if "is not relied on" in caution]
+    assert said == ["bearing at support 3 is not relied on: its hanger is corroded"]
+    through = Loss("decay 1", "decay", 130.0, 150.0, bottom_in=9.25)
+    broken = scenario(
+        spans_in=(100.0, 90.0), separate=True, losses=(through,), lost_bearings=((0, "decay reaches it"),)
+    )
+    cautions = worst([(start, find(piece)) for start, piece in split(broken)]).cautions
+    # the loss begins 130 in, 10.8 ft, from the first support; the middle of its first stretch is named
+    assert any("nothing is left of the section at 10.9 ft" in caution for caution in cautions)
+    assert any("support 1 is not relied on" in caution for caution in cautions)
