@@ -8,6 +8,7 @@ import re
 import signal
 import sys
 from pathlib import Path
+from typing import Any
 
 import pytest
 
@@ -16,7 +17,7 @@ from assess.log.read import read_session
 from tests.terminal import CTRL_Q, ENTER, ESCAPE, F1, HOME, PROGRAM, Terminal, pasted
 
 # Every line of the form that shows by itself, in its order; None leaves it as it is.
-TYPED = (
+TYPED: tuple[tuple[str, str | None, list[str], Any], ...] = (
     ("where", "north bay, second from the stair", ["where"], "north bay, second from the stair"),
     ("kind", "joist", ["kind"], "joist"),
     ("width", "1 5/8; 1 9/16", ["size", "width"], ["1 5/8", "1 9/16"]),

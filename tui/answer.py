@@ -47,10 +47,10 @@ def _finding(f: Finding) -> Said:
     said: Said = [(clean(f"{MARKS[f.verdict]} {verdict_sentence(f)}", longest=300), f.verdict)]
     if f.shore_now:
         said.append(("! shore now: dead load alone is too much", "refused"))
-    said += [(_governs(f), "strong"), (carries_sentence(f), ""), (service_sentence(f), "")]
+    said.append((_governs(f), "strong"))
     pending = [c for c in f.cautions if c.startswith("recorded, not yet assessed")]
     said += [(clean(caution, longest=200), "undetermined") for caution in pending]
-    said.append((clean(f.leading, longest=300), "muted"))
+    said += [(clean(f.leading, longest=300), "muted"), (carries_sentence(f), ""), (service_sentence(f), "")]
     change = change_sentence(f)
     if change is not None:
         said.append((change, "muted"))

@@ -15,7 +15,7 @@ from textual.binding import BindingType
 from textual.screen import Screen
 from textual.worker import get_current_worker
 
-from tui import actions, exits
+from tui import actions, changes, exits
 from tui.ahead import AheadApp
 from tui.clean import clean
 from tui.screens.base import Base
@@ -189,7 +189,15 @@ class Willcarry(AheadApp[int]):
 
     def action_save(self) -> None:
         """Everything accepted is on disk already; what could not be written is tried again."""
-        self.notice(self.store.retry().words if self.store is not None else "still reading the session")
+        if self.store is None:
+            self.notice("still reading the session")
+            return
+        saved = self.store.retry()
+        if saved.on_disk or self.store.read_only is not None:
+            self.status = self.status if self.store.read_only is not None else "saved"
+            self.notice(saved.words)
+        else:
+            changes.save_elsewhere(self, saved.words)
 
     async def action_quit(self) -> None:
         """Quit."""
@@ -214,6 +222,11 @@ class Willcarry(AheadApp[int]):
         if self.store is not None:
             self.store.close()
         self.exit(return_code=status)
+
+    def on_unmount(self) -> None:
+        """Let go of the file, however the app came to its end."""
+        if self.store is not None:
+            self.store.close()
 
     def _handle_exception(self, error: Exception) -> None:
         """Something unexpected: end at once, with nothing of the session printed; the command line says the rest."""

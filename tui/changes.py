@@ -38,18 +38,21 @@ def change(app: Willcarry, event: dict[str, Any], words: str) -> bool:
     return True
 
 
-def new_member(app: Willcarry, suggested: str, of: str | None = None) -> None:
+def new_member(app: Willcarry, suggested: str, of: str | None = None, bay: str | None = None) -> None:
     """Ask for an id, add a member, or a copy of one, and open it.
 
     suggested   id to start from
     of          id of the member to copy, or None for an empty one
+    bay         id of the bay an empty one starts in
     """
     if not may_change(app):
         return
     store = app.store
     assert store is not None
-    data = copy.deepcopy(store.members[of]) if of is not None else {}
+    data = copy.deepcopy(store.members[of]) if of is not None else {"bay": bay} if bay is not None else {}
     title = f"A copy of {clean(of, longest=60)}" if of is not None else "A new member"
+    if bay is not None:
+        title += f" of {clean(bay, longest=60)}"
 
     def refuse(answers: list[str]) -> str | None:
         from assess.errors import ReadingError
@@ -116,6 +119,28 @@ def name_site(app: Willcarry) -> None:
 
     asked = [("site", ""), ("inspector", ""), ("units of a number without one: US or SI", "US")]
     app.push_screen(AskScreen("This session", asked, refuse), answered)
+
+
+def save_elsewhere(app: Willcarry, why: str) -> None:
+    """Ask for another file where the session's own cannot be written, and go on there."""
+    from tui.store import NotKeptError
+
+    store = app.store
+    assert store is not None
+
+    def refuse(answers: list[str]) -> str | None:
+        try:
+            store.save_elsewhere(answers[0].strip())
+        except NotKeptError as error:
+            return clean(str(error), longest=200)
+        return None
+
+    def answered(answers: list[str] | None) -> None:
+        if answers is not None:
+            app.path, app.status = store.path, "saved"
+            app.notice(f"everything is saved in {store.path}")
+
+    app.push_screen(AskScreen(clean(why, longest=300), [("write everything to another file", "")], refuse), answered)
 
 
 def undo(app: Willcarry, told: Callable[[Saved, str], None]) -> None:

@@ -11,7 +11,7 @@ from assess.record_set import apply_set
 from tui.clean import clean
 from tui.field_shown import refusal, understood
 from tui.field_text import raw_of, to_raw, to_text
-from tui.fields import FORM, ROOF, Field, taken
+from tui.fields import BY_KEY, FORM, ROOF, Field, taken
 
 
 @dataclass(frozen=True)
@@ -32,7 +32,12 @@ class SheetLine:
 
 
 def lines(
-    data: dict[str, Any], member: Member | None, drafts: dict[str, str], units: str, more: bool
+    data: dict[str, Any],
+    member: Member | None,
+    drafts: dict[str, str],
+    units: str,
+    more: bool,
+    also: tuple[str, ...] = (),
 ) -> list[SheetLine]:
     """The lines of a member's form.
 
@@ -41,19 +46,39 @@ def lines(
     drafts    texts not kept yet, by line
     units     of the session
     more      show the lines seldom used as well
+    also      lines to show though they hold nothing
     """
-    needed = _needed(member) if member is not None else set()
+    needed = _needed(member)
     found = []
     for field in FORM:
         line = _line(field, data, member, drafts, units, needed)
         roof = field.key in ROOF and member is not None and member.kind == "rafter"
-        if more or field.main or roof or line.state in ("read", "draft", "refused", "bay", "needed"):
+        if (
+            more
+            or field.main
+            or roof
+            or field.key in also
+            or line.state in ("read", "draft", "refused", "bay", "needed")
+        ):
             found.append(line)
     return found
 
 
-def _needed(member: Member) -> set[str]:
+def line_of(field: Field, data: dict[str, Any], member: Member | None, units: str) -> SheetLine:
+    """One line of the form, without drafts."""
+    return _line(field, data, member, {}, units, _needed(member))
+
+
+def blocked_by(data: dict[str, Any], drafts: dict[str, str], units: str) -> str | None:
+    """Label of the first line whose text, typed but not kept, is not understood; while it stands there is no answer."""
+    wrong = (key for key, text in drafts.items() if problem_of(data, BY_KEY[key], text, units) is not None)
+    return next((BY_KEY[key].label for key in wrong), None)
+
+
+def _needed(member: Member | None) -> set[str]:
     """Lines that must still be read, by the record's own list of what it lacks."""
+    if member is None:
+        return set()
     whole_part = {
         "size": ("size.width", "size.depth"),
         "wood": ("wood.species", "wood.grade"),

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import copy
 import os
-from dataclasses import dataclass, field
+from dataclasses import dataclass, field, replace
 from typing import Any
 
 from assess.errors import ReadingError
@@ -17,8 +17,10 @@ from assess.log.write import SessionLog, WriteError
 from assess.record import Member
 from assess.survey import Assessed, assessed, whole_member
 from assess.whole import study
+from tui.fields import BY_KEY
 from tui.undo import inverse
 
+LONGEST_DRAFT = 10_000  # characters; no field of the record holds more
 STRETCHES = 120  # in which utilisation along a member is kept for its drawing
 
 
@@ -60,7 +62,8 @@ class Store:
     done: list[tuple[dict[str, Any], dict[str, Any]]] = field(default_factory=list)  # (event, its inverse)
     undone: list[tuple[dict[str, Any], dict[str, Any]]] = field(default_factory=list)
     found: dict[str, Assessed] = field(default_factory=dict)
-    drafts: dict[tuple[str, str], str] = field(default_factory=dict)  # (id, line) -> text
+    drafts: dict[tuple[str, str], str] = field(default_factory=dict)  # of members: (id, line) -> text
+    bay_drafts: dict[tuple[str, str], str] = field(default_factory=dict)
     _empty: State = field(default_factory=lambda: State("US"))
     _told: int = 0
 
@@ -74,8 +77,9 @@ class Store:
             return cls(path, None)
         store = cls(path, SessionLog.open(path))
         for draft in drafts.load(path):
-            if draft.kind == "member" and draft.id in store.members:
-                store.drafts[draft.id, draft.field] = draft.text
+            known = draft.kind in ("member", "bay") and draft.id in store.state.records[draft.kind]
+            if known and draft.field in BY_KEY and len(draft.text) <= LONGEST_DRAFT:
+                store.keep_draft(draft.id, draft.field, draft.text, draft.kind)
         return store
 
     @property
@@ -134,12 +138,15 @@ class Store:
         state = self.state if data is None else snapshot(self.state)
         if data is not None:
             state.records["member"][member_id] = data
-        item = assessed(state, member_id) if data is not None else self.assessed(member_id)
+        member: Member | None = None
         try:
             member = whole_member(state, member_id)
+            finding, uses = study(member, STRETCHES)
         except ReadingError:
-            member = None
-        uses = study(item.member, STRETCHES)[1] if item.finding is not None and item.member is not None else ()
+            return Seen(member, assessed(state, member_id), ())
+        item = Assessed(member_id, member, finding, None, False)
+        if data is None:
+            self.found[member_id] = item
         return Seen(member, item, uses)
 
     def change(self, event: dict[str, Any]) -> Saved:
@@ -179,7 +186,7 @@ class Store:
         saved = self._append(back)
         source.pop()
         target.append((back, event))
-        return saved
+        return replace(saved, field=".".join(event.get("path", ())))
 
     def _append(self, event: dict[str, Any]) -> Saved:
         assert self.log is not None
@@ -213,27 +220,46 @@ class Store:
             return Saved(str(error), False)
         return Saved("already saved: every accepted reading is on disk", True)
 
+    def save_elsewhere(self, path: str) -> None:
+        """Write everything, what waits included, to another file and go on there.
+
+        raises   NotKeptError where that file is there already or cannot be made
+        """
+        assert self.log is not None
+        try:
+            self.log.save_elsewhere(path)
+        except SessionError as error:
+            raise NotKeptError(str(error)) from None
+        self.path = path
+
     @property
     def waiting(self) -> int:
         """Changes accepted but not on disk."""
         return len(self.log.pending) if self.log is not None else 0
 
-    def member_drafts(self, member_id: str) -> dict[str, str]:
-        """Texts of a member that are not kept yet, by line."""
-        return {key: text for (name, key), text in self.drafts.items() if name == member_id}
+    def member_drafts(self, member_id: str, kind: str = "member") -> dict[str, str]:
+        """Texts of a member, or a bay, that are not kept yet, by line."""
+        return {key: text for (name, key), text in self._drafts_of(kind).items() if name == member_id}
 
-    def keep_draft(self, member_id: str, key: str, text: str | None) -> None:
+    def keep_draft(self, member_id: str, key: str, text: str | None, kind: str = "member") -> None:
         """Remember a text not kept yet; None forgets it."""
         if text is None:
-            self.drafts.pop((member_id, key), None)
+            self._drafts_of(kind).pop((member_id, key), None)
         else:
-            self.drafts[member_id, key] = text
+            self._drafts_of(kind)[member_id, key] = text
+
+    def _drafts_of(self, kind: str) -> dict[tuple[str, str], str]:
+        return self.bay_drafts if kind == "bay" else self.drafts
 
     def flush_drafts(self) -> str | None:
         """Write the drafts beside the session; why that failed, or None."""
         if self.log is None or self.read_only is not None:
             return None
-        kept = [Draft("member", name, key, text) for (name, key), text in self.drafts.items()]
+        kept = [
+            Draft(kind, name, key, text)
+            for kind in ("member", "bay")
+            for (name, key), text in self._drafts_of(kind).items()
+        ]
         try:
             drafts.save(self.log.path, kept)
         except OSError as error:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable
+from functools import partial
 from typing import ClassVar
 
 from textual.app import ComposeResult
@@ -44,12 +45,12 @@ class AskScreen(Base[Answers | None]):
         for number, line in enumerate(self.lines()):
             line.say = self.why
             line.acts = {
-                "enter": lambda n=number: self._go(n),
-                "escape": lambda: self.finish(None),
-                "down": lambda n=number: self._to(n + 1),
-                "tab": lambda n=number: self._to(n + 1),
-                "up": lambda n=number: self._to(n - 1),
-            }  # type: ignore[dict-item]
+                "enter": partial(self._go, number),
+                "escape": partial(self.finish, None),
+                "down": partial(self._to, number + 1),
+                "tab": partial(self._to, number + 1),
+                "up": partial(self._to, number - 1),
+            }
         self._to(0)
 
     def lines(self) -> list[Line]:

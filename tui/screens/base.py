@@ -15,6 +15,16 @@ if TYPE_CHECKING:
     from tui.app import Willcarry
 
 T = TypeVar("T")
+FIXED = (
+    "head",
+    "counts",
+    "heads",
+    "said",
+    "keys",
+    "drawing-below",
+    "drawing-middle",
+    "checks",
+)  # of one height: new words move nothing
 
 
 class Base(Screen[T], Generic[T]):
@@ -23,12 +33,16 @@ class Base(Screen[T], Generic[T]):
     WHERE   place in the registry whose keys the footer shows
     """
 
-    HORIZONTAL_BREAKPOINTS: ClassVar[list[tuple[int, str]] | None] = [
+    HORIZONTAL_BREAKPOINTS = [  # noqa: RUF012 - Textual declares it of the instance
         (0, "-cramped"), (40, "-narrow"), (70, "-normal"), (120, "-wide"),
     ]  # fmt: skip
-    VERTICAL_BREAKPOINTS: ClassVar[list[tuple[int, str]] | None] = [(0, "-flat"), (12, "-low"), (20, "-high")]
+    VERTICAL_BREAKPOINTS = [(0, "-flat"), (12, "-low"), (20, "-high")]  # noqa: RUF012
     AUTO_FOCUS = ""
     WHERE: ClassVar[str] = ""
+
+    def __init__(self, classes: str | None = None) -> None:
+        super().__init__(classes=classes)
+        self._shown: dict[str, Content] = {}
 
     @property
     def ours(self) -> Willcarry:
@@ -43,10 +57,14 @@ class Base(Screen[T], Generic[T]):
         self.put("keys", actions.footer(where or self.WHERE, max(0, self.size.width - 2)))
 
     def put(self, name: str, text: str | Content) -> None:
-        """Show cleaned text in one of the screen's lines; it is never read as markup."""
+        """Show cleaned text in one of the screen's lines; it is never read as markup. What did not change stays."""
         found = self.query(f"#{name}")
-        if found:
-            found.first(Static).update(text if isinstance(text, Content) else Content(text))
+        content = text if isinstance(text, Content) else Content(text)
+        held = self._shown.get(name)
+        if not found or (held is not None and held.is_same(content)):
+            return
+        self._shown[name] = content
+        found.first(Static).update(content, layout=name not in FIXED)
 
     def on_screen_resume(self, event: ScreenResume) -> None:
         """The screen stands: hand it the keys that were typed ahead."""

@@ -2,11 +2,11 @@
 
 from __future__ import annotations
 
-from typing import ClassVar
+from typing import TYPE_CHECKING, Any, ClassVar
 
 from textual.app import ComposeResult
 from textual.binding import BindingType
-from textual.containers import Horizontal, Vertical, VerticalScroll
+from textual.containers import Horizontal, Vertical
 from textual.content import Content
 from textual.events import Resize
 from textual.widgets import Static
@@ -17,12 +17,15 @@ from tui.clean import clean
 from tui.elevation import elevation
 from tui.field_shown import also_recorded
 from tui.screens.base import small_notice
-from tui.screens.looks import said_content
 from tui.screens.readings import Readings
 from tui.screens.rows import RowList, fit
 from tui.screens.typing import TypingScreen
-from tui.sheet import SheetLine, lines
+from tui.screens.words import Words
+from tui.sheet import SheetLine, blocked_by, lines
 from tui.store import Seen, Store
+
+if TYPE_CHECKING:
+    from assess.record import Member
 
 
 class MemberScreen(TypingScreen):
@@ -43,8 +46,7 @@ class MemberScreen(TypingScreen):
             with Vertical(id="middle"):
                 yield Static("", id="drawing-middle")
                 yield Static("", id="checks")
-            with VerticalScroll(id="answers", can_focus=False):
-                yield Static("", id="answer")
+            yield Words("answer")
         yield Static("", id="drawing-below")
         yield Static("", id="said")
         yield Static("", id="keys")
@@ -52,8 +54,8 @@ class MemberScreen(TypingScreen):
 
     def on_mount(self) -> None:
         """Show the member as it stands."""
-        self.readings.keep, self.readings.leave = self.keep, self.leave
-        self.readings.watch, self.readings.start_text = self.watch, self.start_text
+        self.readings.keep, self.readings.leave, self.readings.same = self.keep, self.leave, self.same
+        self.readings.weigh, self.readings.start_text = self.weigh, self.start_text
         line = self.readings.line
         line.say = self.say
         does = {
@@ -77,30 +79,37 @@ class MemberScreen(TypingScreen):
 
     def show(self) -> None:
         """Show the member as the record has it."""
-        if self.member_id not in self.store.members:
+        if self.member_id not in self.records:
             self.dismiss(None)
             return
-        seen = self.store.seen(self.member_id)
-        data = self.store.members[self.member_id]
-        drafts = self.store.member_drafts(self.member_id)
-        form = lines(data, seen.member, drafts, self.store.state.units, self.more)
-        self.readings.show(form)
-        blocked = next((line.field.label for line in form if line.state == "refused"), None)
-        self.show_answer(seen, blocked)
+        seen, data, drafts = self.seen(), self.records[self.member_id], self.drafts()
+        self.readings.show(self.form(data, seen.member, drafts))
+        self.show_answer(seen, blocked_by(data, drafts, self.store.state.units))
         if self.readings.typing:
             self.readings.judge()
         self.show_lines()
 
+    def form(self, data: dict[str, Any], member: Member | None, drafts: dict[str, str]) -> list[SheetLine]:
+        """The lines of the form; that of the bay only where there are bays."""
+        also = ("bay",) if self.store.state.records["bay"] else ()
+        return lines(data, member, drafts, self.store.state.units, self.more, also)
+
+    def said_of(self, seen: Seen, blocked: str | None) -> Said:
+        """Paragraphs of the answer; none where a text is not understood."""
+        finding = seen.assessed.finding if blocked is None else None
+        said: Said = answer(seen.assessed, blocked)
+        if finding is not None:
+            said += listed(finding) if self.size.width >= 120 else [(counted(finding), "muted")]
+        return said
+
     def show_answer(self, seen: Seen, blocked: str | None) -> None:
         """Show the answer and the drawing; none where a text is not understood."""
         finding = seen.assessed.finding if blocked is None else None
-        said: Said = answer(seen.assessed, blocked)
+        said = self.said_of(seen, blocked)
         wide = self.size.width >= 120
-        if finding is not None:
-            said += listed(finding) if wide else [(counted(finding), "muted")]
         if seen.member is not None and (also := also_recorded(seen.member)):
             said.append((f"recorded as well: {', '.join(also)}", "muted"))
-        self.put("answer", said_content(said))
+        self.query_one("#answer", Words).say(said)
         middle = self.query_one("#middle").size.width if wide else 0
         width = middle - 2 if wide else self.size.width - 2
         worst = finding.governs.at_in if finding is not None and finding.governs is not None else None
@@ -109,17 +118,23 @@ class MemberScreen(TypingScreen):
         self.put("drawing-middle" if wide else "drawing-below", "\n".join(drawn))
         self.put("checks", "\n".join(checks(finding)) if finding is not None and wide else "")
 
+    def titled(self) -> str:
+        """The record's name in the head."""
+        return clean(self.member_id, longest=100)
+
     def show_lines(self) -> None:
         """Show the head, what is said of the line under the cursor, and the keys."""
-        where = self.store.members.get(self.member_id, {}).get("where")
-        name = clean(self.member_id, longest=100) + (f"  {clean(where, longest=200)}" if isinstance(where, str) else "")
+        where = self.records.get(self.member_id, {}).get("where")
+        name = self.titled() + (f"  {clean(where, longest=200)}" if isinstance(where, str) else "")
         status = clean(self.status or self.store.path, longest=300)
         room = max(0, self.size.width - 2)
         right = min(len(status), room // 2)
         self.put("head", Content(fit(name, room - right - 2) + "  " + fit(status, right)))
         line = self.readings.current
         first = self.of_line(line) if line is not None else ""
-        self.put("said", Content(f"{first}\n{self.message}"))
+        if self.message:
+            first = f"{fit(first, room)}\n{fit(self.message, room)}"
+        self.put("said", Content(first))
         self.foot("typing" if self.readings.typing else "member")
 
     def of_line(self, line: SheetLine) -> str:
@@ -144,6 +159,8 @@ class MemberScreen(TypingScreen):
 
     def on_row_list_moved(self, event: RowList.Moved) -> None:
         """The cursor stands on another line."""
+        if not self.readings.typing:
+            self.message = ""
         self.show_lines()
 
     # keys

@@ -15,6 +15,10 @@ from tui import actions
 from tui.screens.base import Base, small_notice
 
 
+class Scroll(VerticalScroll, can_focus=True, inherit_bindings=False):
+    """Text that scrolls by the screen's own keys, at once."""
+
+
 class PageScreen(Base[None]):
     """Text that scrolls.
 
@@ -30,7 +34,7 @@ class PageScreen(Base[None]):
 
     def compose(self) -> ComposeResult:
         yield Static(Content(self.heading), id="head")
-        with VerticalScroll(id="page"):
+        with Scroll(id="page"):
             yield Static(Content(self.text), id="text")
         yield Static("", id="keys")
         yield small_notice()
@@ -44,9 +48,9 @@ class PageScreen(Base[None]):
         self.foot()
 
     @property
-    def page(self) -> VerticalScroll:
+    def page(self) -> Scroll:
         """The part that scrolls."""
-        return self.query_one("#page", VerticalScroll)
+        return self.query_one("#page", Scroll)
 
     def action_down(self) -> None:
         """A line down."""

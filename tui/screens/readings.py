@@ -17,7 +17,7 @@ from tui.screens.rows import Piece, RowList, fit
 from tui.sheet import SheetLine
 
 LABEL = 12
-ANSWER_AFTER = 0.02  # s; the key is echoed first, the answer follows within two frames
+ANSWER_AFTER = 0.008  # s; the key is echoed first, the answer follows within two frames
 DRAFT_AFTER = 1.0  # s without a key
 LOOKS = {
     "read": ("", "muted"),
@@ -77,11 +77,12 @@ class SheetRows(RowList):
 
 
 class Readings(Widget):
-    """The form; what is typed is proposed to `keep` and `watch`, which belong to the screen.
+    """The form; what is typed is proposed to `keep` and `weigh`, which belong to the screen.
 
     keep    (field key, text) -> why it is refused, or None where it is kept
-    watch   shows what the text would change; None where typing ended
+    weigh   shows what the text would change; None where typing ended
     leave   a text is left behind unkept
+    same    a line is left as it was
     """
 
     class Typing(Message):
@@ -97,9 +98,11 @@ class Readings(Widget):
         self.line = Line(id="typed")
         self.keep: Callable[[str, str], str | None] = lambda key, text: None
         self.leave: Callable[[str, str], None] = lambda key, text: None
-        self.watch: Callable[[str, str], tuple[str, str]] = lambda key, text: ("", "")
+        self.weigh: Callable[[str, str], tuple[str, str]] = lambda key, text: ("", "")
         self.start_text: Callable[[SheetLine], str | None] = lambda line: line.text
+        self.same: Callable[[str], None] = lambda key: None
         self.began = ""
+        self.from_draft = False
         self.typing = False
         self._answer: Timer | None = None
         self._draft: Timer | None = None
@@ -134,6 +137,7 @@ class Readings(Widget):
         if text is None:
             return False
         self.began = clean(text, longest=10_000)
+        self.from_draft = line is not None and line.state in ("draft", "refused")
         self.typing = True
         self.rows.typing_echo = ("", "")
         self.place()
@@ -150,8 +154,11 @@ class Readings(Widget):
 
     def stop(self) -> None:
         """End typing; a changed text is left behind as a draft."""
-        if self.typing and self.line.value != self.began:
-            self.leave(self.current.field.key, self.line.value)  # type: ignore[union-attr]
+        if self.typing and self.current is not None:
+            if self.line.value != self.began:
+                self.leave(self.current.field.key, self.line.value)
+            elif not self.from_draft:
+                self.same(self.current.field.key)
         self._end()
 
     def point(self, row: int) -> None:
@@ -188,16 +195,20 @@ class Readings(Widget):
         if not self.typing or self.current is None:
             return
         key, text = self.current.field.key, self.line.value
-        if text != self.began and self.keep(key, text) is not None:
-            self.leave(key, text)
+        if text != self.began:
+            if self.keep(key, text) is not None:
+                self.leave(key, text)
+        elif not self.from_draft:
+            self.same(key)
 
     def enter(self) -> None:
         """Keep the text and go on to the next line; stay where it is refused."""
         line = self.current
         if line is None:
             return
-        same = self.line.value == self.began and line.state not in ("draft", "refused")
-        if same or self.keep(line.field.key, self.line.value) is None:
+        if self.line.value == self.began and not self.from_draft:
+            self.go(1)
+        elif self.keep(line.field.key, self.line.value) is None:
             self._onward(1)
         else:
             self.judge()
@@ -231,7 +242,7 @@ class Readings(Widget):
     def judge(self) -> None:
         """Ask the screen what the text says."""
         if self.typing and self.current is not None:
-            self.rows.typing_echo = self.watch(self.current.field.key, self.line.value)
+            self.rows.typing_echo = self.weigh(self.current.field.key, self.line.value)
             self.rows.refresh()
 
     def on_row_list_moved(self, event: RowList.Moved) -> None:

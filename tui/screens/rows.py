@@ -36,7 +36,7 @@ class RowList(ScrollView, can_focus=True, inherit_bindings=False):
     """Rows with a cursor; what a row says is its subclass's business, and never read as markup."""
 
     COMPONENT_CLASSES: ClassVar[set[str]] = {f"rows--{look}" for look in LOOKS} | {"rows--cursor"}
-    cursor: reactive[int] = reactive(0)
+    cursor: reactive[int] = reactive(0, repaint=False)  # the two rows it concerns are drawn anew, no more
 
     class Moved(Message):
         """The cursor stands on another row."""
@@ -67,10 +67,11 @@ class RowList(ScrollView, can_focus=True, inherit_bindings=False):
         """Keep the cursor on a row."""
         return max(0, min(cursor, self.row_count() - 1))
 
-    def watch_cursor(self) -> None:
+    def watch_cursor(self, before: int, after: int) -> None:
         """Keep the cursor's row in sight and say that it moved."""
         self.keep_in_sight()
-        self.refresh()
+        self.refresh_line(before)
+        self.refresh_line(after)
         self.post_message(self.Moved())
 
     def keep_in_sight(self) -> None:

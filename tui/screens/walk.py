@@ -76,6 +76,8 @@ class WalkScreen(Base[None]):
         self.list.shown = [self.all[row.id] for row in self.list.shown if row.id in self.all]
         self.list.refill()
         self.show_lines()
+        if (came := getattr(self.app.screen, "members_came", None)) is not None:
+            came()  # a bay is open and shows them as well
 
     def show_lines(self) -> None:
         """Show head, counts, column heads, what is said, keys."""
@@ -90,7 +92,7 @@ class WalkScreen(Base[None]):
         text = counts(list(self.all.values()))
         if self.filter:
             text = f"{len(self.list.shown)} shown that hold {clean(self.filter, longest=40)!r}; " + text
-        typed = len(store.drafts) if store is not None else 0
+        typed = len(store.drafts) + len(store.bay_drafts) if store is not None else 0
         if typed:
             text += f"; {typed} text{'s' if typed > 1 else ''} typed but not kept"
         self.put("counts", text)
@@ -109,7 +111,8 @@ class WalkScreen(Base[None]):
         """Say what became of a change, and show it."""
         store = self.ours.store
         assert store is not None
-        self.ours.status = saved.words
+        self.ours.status = "saved" if saved.on_disk else "NOT SAVED"
+        words = words if saved.on_disk else saved.words
         self.message = clean("; ".join([*([words] if words else []), *store.notices()]), longest=400)
         self.ours.refresh_walk()
 
@@ -155,12 +158,33 @@ class WalkScreen(Base[None]):
 
     def action_add(self) -> None:
         """Add a member."""
-        changes.new_member(self.ours, next_id(list(self.all)))
+        changes.new_member(self.ours, next_id(self._used()), bay=self._bay())
+
+    def _bay(self) -> str | None:
+        """The bay of the member under the cursor, where it names one that is there."""
+        store = self.ours.store
+        bay = store.members.get(self.current or "", {}).get("bay") if store is not None else None
+        return bay if store is not None and isinstance(bay, str) and bay in store.state.records["bay"] else None
+
+    def action_bays(self) -> None:
+        """The bays."""
+        store = self.ours.store
+        if store is None:
+            self.say("still reading the session")
+            return
+        from tui.screens.bays import BaysScreen
+
+        self.app.push_screen(BaysScreen(store), lambda _: self.ours.refresh_walk())
+
+    def _used(self) -> list[str]:
+        """Ids that are or were in use; a dropped one is not given to another member."""
+        store = self.ours.store
+        return [name for kind, name in store.state.touched if kind == "member"] if store is not None else []
 
     def action_copy(self) -> None:
         """Copy the member under the cursor."""
         if self.current is not None:
-            changes.new_member(self.ours, next_id(list(self.all), self.current), self.current)
+            changes.new_member(self.ours, next_id(self._used(), self.current), self.current)
 
     def action_drop(self) -> None:
         """Drop the member under the cursor."""

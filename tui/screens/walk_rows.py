@@ -32,6 +32,7 @@ class WalkRows(RowList):
     def __init__(self) -> None:
         super().__init__(id="walk")
         self.shown: list[WalkRow] = []
+        self.longest = 0  # of the ids shown
 
     def row_count(self) -> int:
         """How many members are shown."""
@@ -56,8 +57,12 @@ class WalkRows(RowList):
 
     def columns(self, width: int) -> tuple[int, int, int, int, int, int]:
         """Columns of a row that is so wide."""
-        longest = max((len(row.name) for row in self.shown[:500]), default=0)
-        return widths(width - 2, longest)
+        return widths(width - 2, self.longest)
+
+    def refill(self) -> None:
+        """Rows came, went or changed."""
+        self.longest = max((len(row.name) for row in self.shown), default=0)
+        super().refill()
 
 
 def next_id(ids: list[str], after: str | None = None) -> str:
