@@ -14,7 +14,7 @@ import pytest
 
 from assess.log.fold import fold
 from assess.log.read import read_session
-from tests.terminal import CTRL_Q, ENTER, ESCAPE, F1, HOME, PROGRAM, Terminal, pasted
+from tests.terminal import CTRL_Q, ENTER, F1, HOME, PROGRAM, UP, Terminal, pasted
 
 # Every line of the form that shows by itself, in its order; None leaves it as it is.
 TYPED: tuple[tuple[str, str | None, list[str], Any], ...] = (
@@ -78,20 +78,32 @@ def test_a_member_typed_in_one_breath_survives_a_kill(tmp_path: Path) -> None:
     assert again.ended() == 0
 
 
-@pytest.mark.parametrize(("number", "status"), [(signal.SIGTERM, 143), (signal.SIGHUP, 129)])
-def test_told_to_end_it_keeps_the_text_and_the_terminal(tmp_path: Path, number: int, status: int) -> None:
+RESTORED = (b"\x1b[?1049l", b"\x1b[?1000l", b"\x1b[?1003l", b"\x1b[?25h", b"\x1b[?2004l")
+
+
+def test_a_second_copy_reads_only_and_a_terminated_one_keeps_the_text_and_the_terminal(tmp_path: Path) -> None:
     path = tmp_path / "new.survey"
-    terminal = Terminal(PROGRAM, str(path))
-    terminal.wait_for("a new session")
-    terminal.send("a", "J-1", ENTER, "stair ha")
-    terminal.wait_for("stair ha")
-    terminal.kill(number)
-    assert terminal.ended() == status
-    for left in (b"\x1b[?1049l", b"\x1b[?1000l", b"\x1b[?1003l", b"\x1b[?25h", b"\x1b[?2004l"):
-        assert left in terminal.out.split(b"stair ha")[-1]
-    if number != signal.SIGTERM:
-        assert "stair ha" in (tmp_path / "new.survey.draft").read_text(encoding="utf-8")
-        return
+    first = Terminal(PROGRAM, str(path))
+    first.wait_for("a new session")
+    first.send("a", "J-1", ENTER, "cellar", ENTER)
+    first.wait_for("saved")
+    second = Terminal(PROGRAM, str(path))
+    second.wait_for("read only", "another copy")
+    before = path.read_bytes()
+    second.send("d")
+    second.send(ENTER)
+    second.wait_for("to be read")
+    second.send(ENTER, "attic", ENTER)
+    second.wait_for("read only")
+    assert path.read_bytes() == before
+    second.send(CTRL_Q)
+    assert second.ended() == 0
+
+    first.send(UP, "stair ha")
+    first.wait_for("stair ha")
+    first.kill(signal.SIGTERM)
+    assert first.ended() == 143
+    assert all(code in first.out.split(b"stair ha")[-1] for code in RESTORED)
     again = Terminal(PROGRAM, str(path))
     again.wait_for("1 text typed but not kept")
     again.send(ENTER)
@@ -129,26 +141,6 @@ def test_a_crash_prints_three_lines_and_no_value_of_the_session(tmp_path: Path) 
     assert record(path, "J-1") == {}
 
 
-def test_a_second_copy_reads_only(tmp_path: Path) -> None:
-    path = tmp_path / "new.survey"
-    first = Terminal(PROGRAM, str(path))
-    first.wait_for("a new session")
-    first.send("a", "J-1", ENTER, "cellar", ENTER)
-    first.wait_for("saved")
-    second = Terminal(PROGRAM, str(path))
-    second.wait_for("read only", "another copy")
-    before = path.read_bytes()
-    second.send("d")
-    second.send(ENTER)
-    second.wait_for("to be read")
-    second.send(ENTER, "attic", ENTER)
-    second.wait_for("read only")
-    assert path.read_bytes() == before
-    for terminal in (first, second):
-        terminal.send(CTRL_Q)
-        assert terminal.ended() == 0
-
-
 HOSTILE = "\x1b]52;c;cHdu\x07 \x1b]0;x\x07 \x1b[2J \x9b31m [@click=app.quit]x[/] inv\u202egpj.exe"
 
 
@@ -165,12 +157,12 @@ def test_no_byte_of_a_text_reaches_the_terminal_raw(tmp_path: Path) -> None:
     terminal.wait_for("to be read")
     terminal.send(ENTER, HOME, pasted("\x1b]52;c;cGFzdGVk\x07"), ENTER)
     terminal.wait_for("saved")
-    terminal.send(ESCAPE)
-    terminal.pump(0.3)
-    terminal.send(ESCAPE)
-    terminal.wait_for("1 member:")
-    terminal.send(CTRL_Q)
-    assert terminal.ended() == 0
+    terminal.send("stair ha")
+    terminal.wait_for("stair ha")
+    terminal.kill(signal.SIGHUP)
+    assert terminal.ended() == 129
+    assert all(code in terminal.out.split(b"stair ha")[-1] for code in RESTORED)
+    assert "stair ha" in Path(f"{path}.draft").read_text(encoding="utf-8")
     # the shape of the mouse pointer is the interface's own
     out = re.sub(rb"\x1b\]22;[a-z]+\x07", b"", terminal.out)
     for bad in (b"\x1b]52", b"\x1b]0;", b"\x07", "\x9b".encode(), b"\x1b[2J \xc2", b"\xe2\x80\xae", b"]0;owned\x07"):
@@ -198,11 +190,7 @@ def test_what_is_no_session_is_refused_in_one_line(tmp_path: Path, name: str) ->
     assert b"\x1b" not in terminal.out
 
 
-def test_colours_off_and_a_tiny_window(tmp_path: Path) -> None:
-    terminal = Terminal(PROGRAM, "demo", columns=20, lines=5, NO_COLOR="1")
-    terminal.wait_for("too small")
-    terminal.send(CTRL_Q)
-    assert terminal.ended() == 0
+def test_without_colour_in_a_plain_locale(tmp_path: Path) -> None:
     terminal = Terminal(PROGRAM, "demo", NO_COLOR="1", LANG="C", TMPDIR=str(tmp_path))
     terminal.wait_for("N-07", "inadequate", "› ")
     terminal.send(F1)

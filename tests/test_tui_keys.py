@@ -63,7 +63,7 @@ async def test_the_keys_of_the_walk_list(tmp_path: Path) -> None:
         ):  # fmt: skip
             await pilot.press(key)
             assert walk.list.cursor == row, key
-        for key in ("question_mark", "f1", "w"):
+        for key in ("question_mark", "w"):
             await pilot.press(key)
             await until(pilot, lambda: isinstance(app.screen, PageScreen))
             await pilot.press("escape")
@@ -124,7 +124,7 @@ async def test_the_keys_of_a_member_and_of_typing(tmp_path: Path) -> None:
         assert len(rows.lines) > last + 20
         await pilot.press("m")
         assert len(rows.lines) == last + 1
-        for key in ("question_mark", "f1", "w"):
+        for key in ("question_mark", "w"):
             await pilot.press(key)
             await until(pilot, lambda: isinstance(app.screen, PageScreen))
             await pilot.press("q")

@@ -80,9 +80,7 @@ def _dispatch(words: list[str]) -> int:
         return exits.ADEQUATE
     foreign = _foreign()
     if foreign is not None:
-        sys.stderr.write(
-            f"willcarry: another package named {foreign!r} stands in ours' way; install willcarry alone\n"
-        )
+        sys.stderr.write(f"willcarry: another package named {foreign!r} stands in ours' way; install willcarry alone\n")
         return exits.BAD_INPUT
     if words and words[0] in COMMANDS:
         from importlib import import_module

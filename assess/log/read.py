@@ -65,22 +65,32 @@ def read_bytes(path: str) -> bytes:
     raises   SessionError for anything that is no readable regular file; never hangs on a FIFO or a device
     """
     try:
-        descriptor = os.open(path, os.O_RDONLY | os.O_NONBLOCK | os.O_CLOEXEC)
+        descriptor = os.open(path, os.O_RDONLY | os.O_NONBLOCK | os.O_NOCTTY | os.O_CLOEXEC)
     except (OSError, ValueError) as error:
         reason = error.strerror if isinstance(error, OSError) and error.strerror else str(error)
         raise SessionError(f"{path!r} cannot be opened: {reason}") from None
+    try:
+        return read_descriptor(path, descriptor)
+    finally:
+        os.close(descriptor)
+
+
+def read_descriptor(path: str, descriptor: int) -> bytes:
+    """The bytes of an open file from its start; `read_bytes` for one who holds it already. Raises SessionError."""
     try:
         status = os.fstat(descriptor)
         if not stat.S_ISREG(status.st_mode):
             raise SessionError(f"{path!r} is not a regular file; accepted: a session file")
         if status.st_size > LARGEST_FILE:
             raise SessionError(f"{path!r} is {status.st_size:,} bytes; a session holds at most {LARGEST_FILE:,}")
+        os.lseek(descriptor, 0, os.SEEK_SET)
         with os.fdopen(descriptor, "rb", closefd=False) as file:
-            return file.read(LARGEST_FILE + 1)
+            data = file.read(LARGEST_FILE + 1)
     except OSError as error:
         raise SessionError(f"{path!r} cannot be read: {error.strerror}") from None
-    finally:
-        os.close(descriptor)
+    if len(data) > LARGEST_FILE:
+        raise SessionError(f"{path!r} grows past {LARGEST_FILE:,} bytes; a session holds no more")
+    return data
 
 
 def read_session(path: str) -> SessionFile:
@@ -135,6 +145,9 @@ def parse_session(path: str, data: bytes) -> SessionFile:
 
 
 def _header(path: str, lines: list[Line], problems: list[Problem]) -> tuple[dict[str, Any], tuple[Line, ...]]:
+    if problems and problems[0].line == 1:
+        reason = problems[0].message.removeprefix("line ")
+        raise SessionError(f"{path!r} has no header that can be used: its first line {reason}")
     if not lines or "willcarry" not in lines[0].event or lines[0].number != 1:
         raise SessionError(f'{path!r} has no header; accepted: a first line such as {{"willcarry": 1, "units": "US"}}')
     header = lines[0].event
@@ -157,7 +170,6 @@ def _header(path: str, lines: list[Line], problems: list[Problem]) -> tuple[dict
     for name in ("site", "inspector", "opened"):
         if not isinstance(header.get(name, ""), str):
             raise SessionError(f"{path!r}: header {name} is not text")
-    del problems  # a bad first line is no header; later ones stay problems
     return header, tuple(lines[1:])
 
 
