@@ -54,10 +54,9 @@ async def bay(app: Willcarry, pilot: Any) -> BayScreen:
     return app.screen
 
 
-@pytest.mark.parametrize("size", [NARROW, WIDE])
-async def test_a_bay_added_and_read_serves_the_member_that_names_it(tmp_path: Path, size: tuple[int, int]) -> None:
+async def test_a_bay_added_and_read_serves_the_member_that_names_it(tmp_path: Path) -> None:
     path = session(tmp_path, {"J-1": BARE})
-    async with opened(path, size) as (app, pilot):
+    async with opened(path, NARROW) as (app, pilot):
         await bays(app, pilot)
         assert "no bays yet: a adds one" in text(app)
         await pilot.press("a")
