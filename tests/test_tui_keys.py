@@ -101,6 +101,8 @@ async def test_the_keys_of_the_walk_list(tmp_path: Path) -> None:
         assert "first line" in text(app)
         await pilot.press("ctrl+s")
         assert "already saved" in text(app)
+        await pilot.press("ctrl+c")
+        assert "Ctrl+Q quits" in text(app)
         await pilot.press("home", "enter")
         await until(pilot, lambda: isinstance(app.screen, MemberScreen))
         await pilot.press("q")
@@ -143,6 +145,12 @@ async def test_the_keys_of_a_member_and_of_typing(tmp_path: Path) -> None:
             assert screen.readings.line.has_focus
         await pilot.press("ctrl+s")
         assert "already saved" in text(app)
+        await pilot.press("end", "ctrl+c")
+        assert "Ctrl+Q quits" in text(app)
+        assert app.clipboard == ""
+        await pilot.press("tab", "ctrl+c")
+        assert "sent to the terminal" in text(app)
+        assert app.clipboard == "1 1/2 in"
         await pilot.press("escape")
         assert not screen.readings.typing
         await pilot.press("u")

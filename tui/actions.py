@@ -107,6 +107,7 @@ ACTIONS = (
     Action("no", "n,escape", "n Esc", "no, leave it", "question", "no"),
     Action("save", "ctrl+s", "Ctrl+S", "say what is saved; try again what could not be written", "anywhere"),
     Action("command_palette", "ctrl+p", "Ctrl+P", "every command, found by its words", "anywhere"),
+    Action("help_quit", "ctrl+c", "Ctrl+C", "copy what is selected; else say how to quit", "anywhere"),
     Action("quit", "ctrl+q", "Ctrl+Q", "quit", "anywhere"),
 )  # fmt: skip
 

@@ -199,6 +199,10 @@ class Willcarry(AheadApp[int]):
         else:
             changes.save_elsewhere(self, saved.words)
 
+    def action_help_quit(self) -> None:
+        """Nothing is discarded by a habit of other programs."""
+        self.notice("Ctrl+Q quits; nothing was changed")
+
     async def action_quit(self) -> None:
         """Quit."""
         self.leave()

@@ -43,10 +43,22 @@ class Line(Input):
             event.prevent_default()
         elif self.resting:
             event.prevent_default()  # typed behind the key that ended the entry: it is meant for the screen
+        elif event.key == "ctrl+c":
+            event.stop()
+            event.prevent_default()
+            self.copy_selected()
         elif event.key in self.acts:
             event.stop()
             event.prevent_default()
             self.acts[event.key]()
+
+    def copy_selected(self) -> None:
+        """Send what is selected to the terminal's clipboard; where nothing is, say how to quit."""
+        if self.selected_text:
+            self.app.copy_to_clipboard(self.selected_text)
+            self.say("the selected text was sent to the terminal")
+        else:
+            self.say("Ctrl+Q quits; nothing was changed")
 
     def _on_paste(self, event: Paste) -> None:
         event.stop()
