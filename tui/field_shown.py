@@ -102,6 +102,11 @@ def choices(field: Field, data: dict[str, Any]) -> list[str]:
         from assess.uses import all_uses
 
         return [use.name for use in all_uses()]
+    if field.form == "points":
+        from assess.things import all_things
+
+        # The place is the one thing no list knows: it is typed over the question mark.
+        return [f"{thing.name} {thing.load_lb:g} lb at ? {thing.load_type}" for thing in all_things()]
     if field.form == "words":
         return [word.strip() for word in field.hint.split(",")]
     if field.form == "yes":

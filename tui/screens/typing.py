@@ -173,13 +173,18 @@ class TypingScreen(Base[None]):
             self.say("this line has no list to pick from")
             return
 
+        adds = line.field.form == "points"
+
         def picked(name: str | None) -> None:
             if name is not None:
-                self.readings.line.value = name
-                self.readings.line.cursor_position = len(name)
+                before = self.readings.line.value.rstrip("; ")
+                text = f"{before}; {name}" if adds and before else name
+                self.readings.line.value = text
+                self.readings.line.cursor_position = text.rfind("?") + 1 if adds else len(text)
             self.set_focus(self.readings.line)
 
-        self.app.push_screen(PickScreen(line.field.label, names, self.readings.line.value), picked)
+        typed = "" if adds else self.readings.line.value
+        self.app.push_screen(PickScreen(line.field.label, names, typed), picked)
 
     def open_note(self, line: SheetLine) -> None:
         """Type the remarks."""
