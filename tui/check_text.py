@@ -26,6 +26,11 @@ def check_lines(path: str) -> tuple[list[str], int]:
     if state.conflicts:
         lines.append(f"{len(state.conflicts)} conflict(s) between two inspectors stand until a person chooses")
     sound = not problems and not file.torn
-    held = ", ".join(f"{len(records)} {kind}s" for kind, records in state.records.items() if records) or "no records"
-    lines.append(f"{'sound' if sound else 'not sound'}: {len(file.lines) + 1} lines, {held}")
+    held = [_counted(len(records), kind) for kind, records in state.records.items() if records]
+    read = _counted(1 + len(file.lines) + len(file.problems), "line")
+    lines.append(f"{'sound' if sound else 'not sound'}: {', '.join([read, *(held or ['no records'])])}")
     return lines, exits.ADEQUATE if sound else exits.BAD_INPUT
+
+
+def _counted(number: int, word: str) -> str:
+    return f"{number:,} {word}" + ("" if number == 1 else "s")

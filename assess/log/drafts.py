@@ -5,7 +5,13 @@ from __future__ import annotations
 import contextlib
 import json
 import os
+import stat
 from dataclasses import asdict, dataclass
+from typing import Any
+
+from assess.log.disk import flush_folder
+
+LARGEST = 20_000_000  # bytes read back; far beyond what is typed between two changes
 
 
 @dataclass(frozen=True)
@@ -34,22 +40,41 @@ def save(path: str, drafts: list[Draft]) -> None:
             os.unlink(target)
         return
     temporary = f"{target}.{os.getpid()}"
-    with open(temporary, "w", encoding="utf-8", errors="replace") as file:
-        json.dump([asdict(draft) for draft in drafts], file, ensure_ascii=False)
-        file.flush()
-        os.fsync(file.fileno())
-    os.replace(temporary, target)
+    # Not through a link: the name can be guessed, and the folder may be shared.
+    flags = os.O_WRONLY | os.O_CREAT | os.O_TRUNC | os.O_NOFOLLOW | os.O_CLOEXEC
+    try:
+        with open(os.open(temporary, flags, 0o644), "w", encoding="utf-8", errors="replace") as file:
+            json.dump([asdict(draft) for draft in drafts], file, ensure_ascii=False)
+            file.flush()
+            os.fsync(file.fileno())
+        os.replace(temporary, target)
+    except OSError:
+        with contextlib.suppress(OSError):
+            os.unlink(temporary)
+        raise
+    flush_folder(target)
 
 
 def load(path: str) -> list[Draft]:
     """Drafts kept for a session; none where there is no side file or it cannot be understood."""
     try:
-        descriptor = os.open(place(path), os.O_RDONLY | os.O_NONBLOCK | os.O_CLOEXEC)
+        descriptor = os.open(place(path), os.O_RDONLY | os.O_NONBLOCK | os.O_NOCTTY | os.O_CLOEXEC)
     except (OSError, ValueError):
         return []
-    with os.fdopen(descriptor, "rb") as file:
-        try:
-            data = json.loads(file.read(1_000_000).decode("utf-8"))
-            return [Draft(**{name: str(item[name]) for name in ("kind", "id", "field", "text")}) for item in data]
-        except (OSError, ValueError, TypeError, KeyError, RecursionError):
+    try:
+        if not stat.S_ISREG(os.fstat(descriptor).st_mode):
             return []
+        with os.fdopen(descriptor, "rb", closefd=False) as file:
+            data = json.loads(file.read(LARGEST).decode("utf-8"))
+    except (OSError, ValueError, RecursionError):
+        return []
+    finally:
+        os.close(descriptor)
+    return [draft for draft in map(_draft, data) if draft is not None] if isinstance(data, list) else []
+
+
+def _draft(item: Any) -> Draft | None:
+    names = ("kind", "id", "field", "text")
+    if not isinstance(item, dict) or not all(isinstance(item.get(name), str) for name in names):
+        return None
+    return Draft(**{name: item[name] for name in names})

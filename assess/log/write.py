@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import contextlib
-import fcntl
+import errno
 import os
 import secrets
 from collections.abc import Callable
@@ -11,9 +11,10 @@ from dataclasses import replace
 from datetime import UTC, datetime
 from typing import Any
 
+from assess.log.disk import FlushError, append_line, is_at, keep_aside, take, write_new
 from assess.log.fold import State, check_event, fold
-from assess.log.lines import VERSION, encode
-from assess.log.read import Line, SessionError, SessionFile, parse_session, read_bytes
+from assess.log.lines import VERSION, LineError, decode, encode
+from assess.log.read import Line, SessionError, SessionFile, parse_session, read_bytes, read_descriptor
 
 CROCKFORD = "0123456789abcdefghjkmnpqrstvwxyz"
 
@@ -32,6 +33,7 @@ class SessionLog:
 
     read_only   why nothing can be written, or None
     pending     lines accepted but not on disk
+    notices     what was found in the file and what happened to it, in the order it was met
     """
 
     def __init__(self, path: str, by: str, clock: Callable[[], str]) -> None:
@@ -44,10 +46,11 @@ class SessionLog:
         self.file: SessionFile
         self.state: State
         self._descriptor: int | None = None
-        self._size = 0
+        self._kept: list[bytes] = []  # whole lines on disk: what the file must begin with to be this session
+        self._size = 0  # bytes of them
+        self._lines = 0  # how many
         self._torn = b""
-        self._lost: str | None = None  # why this file will never take a line again
-        self._kept: list[bytes] = []  # what is on disk, should the file be taken away
+        self._told = 0  # of the state's notices
 
     @classmethod
     def create(
@@ -59,24 +62,10 @@ class SessionLog:
         raises   SessionError where the file exists or cannot be made
         """
         header = {"willcarry": VERSION, "site": site, "inspector": inspector, "opened": clock(), "units": units}
-        line = encode(header)
         try:
-            descriptor = os.open(path, os.O_RDWR | os.O_CREAT | os.O_EXCL | os.O_APPEND | os.O_CLOEXEC, 0o644)
-        except (OSError, ValueError) as error:
-            reason = error.strerror if isinstance(error, OSError) and error.strerror else str(error)
-            raise SessionError(f"{path!r} cannot be made: {reason}") from None
-        try:
-            written = os.write(descriptor, line)
-            os.fsync(descriptor)
-            if written != len(line):
-                raise OSError(28, "the header was written short")
-            _flush_folder(path)
-        except OSError as error:
-            with contextlib.suppress(OSError):
-                os.unlink(path)
-            raise SessionError(f"{path!r} cannot be made: {error.strerror}") from None
-        finally:
-            os.close(descriptor)
+            write_new(path, encode(header))
+        except (OSError, LineError) as error:
+            raise SessionError(f"{path!r} cannot be made: {_reason(error)}") from None
         return cls.open(path, by, clock)
 
     @classmethod
@@ -87,49 +76,52 @@ class SessionLog:
         """
         log = cls(path, by, clock)
         log.read_only = log._take()
-        log._load()
+        try:
+            data = read_bytes(path) if log._descriptor is None else read_descriptor(path, log._descriptor)
+            log._know(parse_session(path, data), data)
+        except SessionError:
+            log.close()
+            raise
+        log.state = fold(log.file.lines, log.file.units)
+        log.notices += log.file.notices
+        log._tell()
         return log
 
     def _take(self) -> str | None:
-        """Open for appending and take the advisory lock; why that is not possible, or None."""
+        """Take the file for writing; why that is not possible, or None."""
         try:
-            descriptor = os.open(self.path, os.O_RDWR | os.O_APPEND | os.O_NONBLOCK | os.O_CLOEXEC)
-        except (OSError, ValueError) as error:
-            return f"the file cannot be written: {getattr(error, 'strerror', None) or error}"
-        try:
-            fcntl.flock(descriptor, fcntl.LOCK_EX | fcntl.LOCK_NB)
-        except OSError:
-            os.close(descriptor)
-            return "another copy has the session open for writing"
-        self._descriptor = descriptor
+            self._descriptor = take(self.path)
+        except OSError as error:
+            return _reason(error)
         return None
 
-    def _load(self) -> None:
-        data = read_bytes(self.path)
-        self.file = parse_session(self.path, data)
-        self._kept = [data[: self.file.size]]
-        self.state = fold(self.file.lines, self.file.units)
-        self._size = self.file.size
-        self._torn = self.file.torn
-        self.notices = [*self.file.notices, *self.state.notices]
+    def _know(self, file: SessionFile, data: bytes) -> None:
+        """Hold on to what stands on disk."""
+        whole = data[: file.size]
+        self.file, self._kept, self._size, self._torn = file, [whole], file.size, file.torn
+        self._lines = whole.count(b"\n") + (0 if file.ended else 1)
+
+    def _tell(self) -> None:
+        self.notices += self.state.notices[self._told :]
+        self._told = len(self.state.notices)
 
     def append(self, event: dict[str, Any]) -> None:
         """Apply a change and write it, flushed, as one line.
 
         event    {'put'|'set'|'drop': kind, 'id': ..., ...}; the stamp is added here
-        raises   ReadingError where the change is refused (nothing is kept of it);
+        raises   ReadingError or LineError where the change is refused (nothing is kept of it);
                  WriteError where it is accepted but not on disk: it is kept in `pending`, see `retry`
         """
         if self.read_only is not None:
             raise WriteError(f"not saved: {self.read_only}")
         check_event(event)
         self.count += 1
-        stamped = event | {"n": self.count, "from": self.source, "at": self.clock(), "by": self.by}
-        line = encode(stamped)
+        line = encode(event | {"n": self.count, "from": self.source, "at": self.clock(), "by": self.by})
         with contextlib.suppress(OSError):  # what is wrong with the file is said when the line is written
-            if self._descriptor is not None:
-                self._meet(self._descriptor)
-        self.state.change(Line(0, stamped))
+            self._meet()
+        # Applied as it will be read back, so that state and file cannot differ.
+        self.state.change(Line(self._lines + len(self.pending) + 1, decode(line[:-1])))
+        self._tell()
         self.pending.append(line)
         self.retry()
 
@@ -139,91 +131,71 @@ class SessionLog:
             try:
                 self._write(self.pending[0])
             except OSError as error:
-                reason = error.strerror or str(error)
-                raise WriteError(
-                    f"not saved yet: {reason}; {len(self.pending)} change(s) kept here until they can be written"
-                ) from None
+                waiting = f"{len(self.pending)} change(s) kept here until they can be written"
+                raise WriteError(f"not saved yet: {_reason(error)}; {waiting}") from None
             self.pending.pop(0)
 
     def _write(self, line: bytes) -> None:
-        if self._descriptor is None:
-            reason = self._lost or self._take()
-            if reason is not None:
-                raise OSError(5, reason)
-        descriptor = self._descriptor
-        assert descriptor is not None
-        self._meet(descriptor)
+        descriptor = self._meet()
         if self._torn:
-            self._set_aside(descriptor)
+            place = keep_aside(self.path, self._torn, self._stamp())
+            os.ftruncate(descriptor, self._size)
+            self._torn = b""
+            self.notices.append(f"the torn end is kept in {place}")
         if not self.file.ended:
             # A whole last line without its newline gets it first, or ours would run into it.
             line = b"\n" + line
         try:
-            written = os.write(descriptor, line)
-            if written != len(line):
-                raise OSError(28, "the line was written short")
-        except OSError:
-            with contextlib.suppress(OSError):
-                os.ftruncate(descriptor, self._size)
-            raise
-        try:
-            os.fsync(descriptor)
-        except OSError:
-            # After a failed flush this descriptor's pages may be lost while it reports success: never trust it again.
-            with contextlib.suppress(OSError):
-                os.ftruncate(descriptor, self._size)
+            append_line(descriptor, line, self._size)
+        except FlushError:
             self.close()
             raise
         self._size += len(line)
+        self._lines += 1
         self._kept.append(line)
         if not self.file.ended:
             self.file = replace(self.file, ended=True)
 
-    def _meet(self, descriptor: int) -> None:
-        """Compare the file with what is expected; fold in and say what another has added."""
-        status = os.fstat(descriptor)
-        if status.st_nlink == 0:
-            self.close()
-            self._lost = "the session file was removed or replaced; save to another place"
-            raise OSError(2, self._lost)
-        here = self._size + len(self._torn)
-        if status.st_size == here:
-            return
-        if status.st_size < here:
-            raise OSError(5, "the session file was cut by another program; save to another place")
-        data = read_bytes(self.path)
-        file = parse_session(self.path, data)
-        known = sum(1 for line in self.file.lines)
-        added = [line for line in file.lines[known:] if line.event.get("from") != self.source]
-        for line in added:
-            self.state.apply(line)
-        if added:
-            self.notices.append(f"{len(added)} line(s) added by another program are folded in")
-        self.file, self._size, self._torn = file, file.size, file.torn
-        self._kept = [data[: file.size]]
+    def _meet(self) -> int:
+        """The descriptor to append to, once what stands at the path is known to be this session still.
 
-    def _set_aside(self, descriptor: int) -> None:
-        """Keep a torn end beside the file, then cut the log back to its last whole line."""
-        stamp = self.clock().replace(":", "").replace("-", "")
-        place = f"{self.path}.torn-{stamp}"
-        number = 1
-        while True:
-            try:
-                aside = os.open(place, os.O_WRONLY | os.O_CREAT | os.O_EXCL | os.O_CLOEXEC, 0o644)
-                break
-            except FileExistsError:
-                number += 1
-                place = f"{self.path}.torn-{stamp}-{number}"
+        Lines another program added are folded in and said. raises OSError where the file is not this session any more
+        """
+        if self._descriptor is not None and not is_at(self.path, self._descriptor):
+            self.close()
+        if self._descriptor is not None:
+            if os.fstat(self._descriptor).st_size == self._size + len(self._torn):
+                return self._descriptor
+        else:
+            self._descriptor = take(self.path)
         try:
-            if os.write(aside, self._torn) != len(self._torn):
-                raise OSError(28, "the torn end could not be kept")
-            os.fsync(aside)
-        finally:
-            os.close(aside)
-        _flush_folder(self.path)
-        os.ftruncate(descriptor, self._size)
-        self._torn = b""
-        self.notices.append(f"the torn end is kept in {place}")
+            self._reread(self._descriptor)
+        except OSError:
+            # Whatever comes to stand there next is read whole again before a byte is added to it.
+            self.close()
+            raise
+        return self._descriptor
+
+    def _reread(self, descriptor: int) -> None:
+        try:
+            data = read_descriptor(self.path, descriptor)
+            kept = b"".join(self._kept)
+            if not data.startswith(kept):
+                how = "cut" if kept.startswith(data) else "changed or replaced"
+                raise SessionError(f"the session file was {how} by another program")
+            if not self.file.ended and data[len(kept) : len(kept) + 1] not in (b"", b"\r", b"\n"):
+                raise SessionError("the last line of the session file was changed by another program")
+            file = parse_session(self.path, data)
+        except SessionError as error:
+            raise OSError(errno.EIO, f"{error}; save to another place") from None
+        added = [line for line in file.lines if line.number > self._lines]
+        for line in added:
+            self.state.apply(line)  # one of ours, whose cutting back failed, is known as a repeat
+        others = sum(line.event.get("from") != self.source for line in added)
+        if others:
+            self.notices.append(f"{others} line(s) added by another program are folded in")
+        self._tell()
+        self._know(file, data)
 
     def save_elsewhere(self, path: str) -> None:
         """Write everything, what waits included, to a new file and go on there.
@@ -233,21 +205,21 @@ class SessionLog:
         kept = b"".join(self._kept)
         data = kept + (b"" if kept.endswith(b"\n") else b"\n") + b"".join(self.pending)
         try:
-            descriptor = os.open(path, os.O_WRONLY | os.O_CREAT | os.O_EXCL | os.O_CLOEXEC, 0o644)
-            try:
-                if os.write(descriptor, data) != len(data):
-                    raise OSError(28, "written short")
-                os.fsync(descriptor)
-            finally:
-                os.close(descriptor)
-            _flush_folder(path)
+            write_new(path, data)
         except OSError as error:
-            raise SessionError(f"{path!r} cannot be made: {error.strerror}") from None
+            raise SessionError(f"{path!r} cannot be made: {_reason(error)}") from None
+        if self._torn:
+            try:
+                self.notices.append(f"the torn end is kept in {keep_aside(path, self._torn, self._stamp())}")
+            except OSError as error:
+                self.notices.append(_reason(error))
         self.close()
-        self.path, self.pending, self._torn, self._lost = path, [], b"", None
+        self.path, self.pending = path, []
         self.read_only = self._take()
-        self.file = parse_session(path, data)
-        self._size, self._kept = self.file.size, [data]
+        self._know(parse_session(path, data), data)
+
+    def _stamp(self) -> str:
+        return self.clock().replace(":", "").replace("-", "")
 
     def close(self) -> None:
         """Let go of the file and its lock; what is on disk stays, what waits stays in `pending`."""
@@ -257,9 +229,5 @@ class SessionLog:
             self._descriptor = None
 
 
-def _flush_folder(path: str) -> None:
-    folder = os.open(os.path.dirname(os.path.abspath(path)), os.O_RDONLY | os.O_DIRECTORY | os.O_CLOEXEC)
-    try:
-        os.fsync(folder)
-    finally:
-        os.close(folder)
+def _reason(error: Exception) -> str:
+    return (error.strerror if isinstance(error, OSError) else None) or str(error)
