@@ -139,7 +139,7 @@ def test_rows_as_the_files_own_lines_name_them(tmp_path: Path) -> None:
             file.write(json.dumps(event) + "\n")
     rows = first_rows(read_session(str(path)))
     assert [(row.id, row.where, row.verdict) for row in rows] == [("J-1", "cellar", "")]
-    assert counts(rows) == "1 member: 0 undetermined, 1 not assessed yet"
+    assert counts(rows) == "1 member, 1 not assessed yet: 0 undetermined"
 
 
 def test_columns_never_exceed_the_width() -> None:

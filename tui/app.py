@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import asyncio
-import os
 import signal
 import time
 from collections.abc import Iterable
@@ -240,14 +239,3 @@ class Willcarry(AheadApp[int]):
             self._exception = error
             self._exception_event.set()
         self._close_messages_no_wait()
-
-
-def draws_plain(environment: dict[str, str] | None = None) -> bool:
-    """Whether the terminal's locale has no line drawing: then figures are ASCII.
-
-    >>> draws_plain({"LANG": "C", "LC_CTYPE": "C.UTF-8"}), draws_plain({"LC_ALL": "en_GB.UTF-8"}), draws_plain({})
-    (True, False, False)
-    """
-    held = os.environ if environment is None else environment
-    said = held.get("LC_ALL") or held.get("LANG") or "utf-8"  # LC_CTYPE is Python's own, where the locale is C
-    return "utf" not in said.lower()

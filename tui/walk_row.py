@@ -80,10 +80,8 @@ def counts(rows: list[WalkRow]) -> str:
     if not rows:
         return "no members yet: a adds one"
     parts = [f"{words.count(word)} {word}" for word in ORDER if word in words or word == "undetermined"]
-    waiting = words.count("")
-    return f"{len(rows)} member{'s' if len(rows) > 1 else ''}: " + ", ".join(
-        parts + ([f"{waiting} not assessed yet"] if waiting else [])
-    )
+    waiting = f", {words.count('')} not assessed yet" if "" in words else ""
+    return f"{len(rows)} member{'s' if len(rows) > 1 else ''}{waiting}: " + ", ".join(parts)
 
 
 def first_rows(file: SessionFile) -> list[WalkRow]:

@@ -64,7 +64,7 @@ def _show(path: str, mouse: bool) -> int:
         except SessionError as error:
             sys.stderr.write(f"willcarry: {clean(str(error))}\n")
             return exits.BAD_INPUT
-    from tui.app import Willcarry, draws_plain
+    from tui.app import Willcarry
 
     app = Willcarry(path, rows, draws_plain())
     app.run(mouse=mouse)
@@ -87,3 +87,14 @@ def _crashed(error: Exception, entries: int, path: str) -> int:
         f"willcarry: stopped by something unexpected ({type(error).__name__})\n{kept}\ndetails are in {name}\n"
     )
     return exits.UNEXPECTED
+
+
+def draws_plain(environment: dict[str, str] | None = None) -> bool:
+    """Whether the terminal's locale has no line drawing: then figures are ASCII.
+
+    >>> draws_plain({"LANG": "C", "LC_CTYPE": "C.UTF-8"}), draws_plain({"LC_ALL": "en_GB.UTF-8"}), draws_plain({})
+    (True, False, False)
+    """
+    held = os.environ if environment is None else environment
+    said = held.get("LC_ALL") or held.get("LANG") or "utf-8"  # LC_CTYPE is Python's own, where the locale is C
+    return "utf" not in said.lower()

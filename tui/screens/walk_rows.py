@@ -22,8 +22,8 @@ def widths(width: int, longest: int = 6) -> tuple[int, int, int, int, int, int]:
     name = max(7, min(longest, 16 if width >= 100 else 10)) + 1
     if width < 62:
         return min(name, max(4, width - 29)), 0, 13, 7, 0, 9
-    governs = 20 if width < 100 else 26
-    return name, max(0, min(44, width - name - governs - 29)), 13, 7, governs, 9
+    governs, carries = (20, 9) if width < 100 else (26, 18)  # a roof's load is named beside it where there is room
+    return name, max(0, min(44, width - name - governs - carries - 20)), 13, 7, governs, carries
 
 
 class WalkRows(RowList):
