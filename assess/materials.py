@@ -3,13 +3,14 @@
 from __future__ import annotations
 
 import csv
-import difflib
 import functools
 import re
 from dataclasses import dataclass
+from math import inf
 from pathlib import Path
 
 from assess.errors import ReadingError
+from assess.offers import key, offers
 
 _TABLE = Path(__file__).parent / "data" / "dead_loads.csv"
 _PER = re.compile(r", per (?:(\d+)/(\d+) )?(?:in|inch)$")
@@ -46,20 +47,28 @@ def all_materials() -> tuple[Material, ...]:
     return tuple(found)
 
 
-def _key(text: str) -> str:
-    return " ".join(re.findall(r"[a-z0-9/]+", text.lower()))
+# Short names people say for one row alone.
+_SHORT = {
+    "plywood": "plywood or OSB",
+    "OSB": "plywood or OSB",
+    "drywall": "gypsum board",
+    "hardwood": "hardwood flooring 7/8 in",
+    "linoleum": "linoleum or asphalt tile 1/4 in",
+    "asphalt tile": "linoleum or asphalt tile 1/4 in",
+    "sand pugging": "dry sand pugging",
+}
 
 
 @functools.cache
 def _index() -> dict[str, Material]:
     index = {}
     for material in all_materials():
-        index[_key(material.name)] = material
+        index[key(material.name)] = material
         short = _OWN.sub("", material.name)
         # A name without its thickness stands for its row where only one row has it.
         if sum(_OWN.sub("", other.name) == short for other in all_materials()) == 1:
-            index.setdefault(_key(short), material)
-    return index
+            index.setdefault(key(short), material)
+    return index | {key(short): index[key(name)] for short, name in _SHORT.items()}
 
 
 def layer_psf(layer: str, thickness_in: float | None = None) -> tuple[float, str, str | None]:
@@ -68,27 +77,32 @@ def layer_psf(layer: str, thickness_in: float | None = None) -> tuple[float, str
     layer          a material of the table, whatever its case and punctuation
     thickness_in   thickness as measured [in]; needed where the table weighs by thickness
     returns        (psf, source, what was assumed or None); a row for one thickness is scaled to another, and said
-    raises         ReadingError for an unknown material or a missing thickness
+    raises         ReadingError for an unknown material, a missing thickness, or one that is none
     source         ASCE 7-16 Table C3.1-1 and others, as each row names
 
     >>> layer_psf("gypsum board", 0.5)[0], layer_psf("hardwood flooring")[0]
     (2.2, 4.0)
     """
-    material = _index().get(_key(layer[:200]))
+    material = _index().get(key(layer))
     if material is None:
-        near = difflib.get_close_matches(_key(layer[:200]), _index(), 3, 0.3)
-        names = "; ".join(dict.fromkeys(_index()[name].name for name in near)) or "plaster on wood lath"
+        nearest = "; ".join(offers(layer, [one.name for one in all_materials()]) or ("plaster on wood lath",))
         raise ReadingError(
-            "layer", layer, f"a material of the table, nearest: {names}; or a typed load", "is not known"
+            "layer", layer, f"a material of the table, nearest: {nearest}; or a typed load", "is not known"
         )
+    if thickness_in is not None and not 0.0 < thickness_in < inf:
+        raise ReadingError("thickness", thickness_in, "a thickness above 0", "is no thickness")
     if material.scales:
         if thickness_in is None or material.per_in is None:
             raise ReadingError("thickness", None, f"a thickness: {material.name} is weighed by thickness", "is missing")
         return material.psf * thickness_in / material.per_in, material.source, None
-    if thickness_in is None or material.per_in is None or thickness_in == material.per_in:
-        note = None
-        if thickness_in is not None and material.per_in is None:
-            note = f"{material.name}: the table has one weight for any thickness"
-        return material.psf, material.source, note
+    if material.per_in is None:
+        one = f"{material.name}: the table has one weight for any thickness"
+        return material.psf, material.source, one if thickness_in is not None else None
+    if thickness_in is None:
+        # The row's own name says its thickness; a short name leaves it to be assumed.
+        taken = f"{material.name}: taken, no thickness read"
+        return material.psf, material.source, None if key(layer) == key(material.name) else taken
+    if thickness_in == material.per_in:
+        return material.psf, material.source, None
     note = f"{material.name}: weight of {material.per_in:g} in scaled to {thickness_in:g} in"
     return material.psf * thickness_in / material.per_in, material.source, note

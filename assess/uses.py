@@ -3,13 +3,12 @@
 from __future__ import annotations
 
 import csv
-import difflib
 import functools
-import re
 from dataclasses import dataclass
 from pathlib import Path
 
 from assess.errors import ReadingError
+from assess.offers import key, offers
 
 _TABLE = Path(__file__).parent / "data" / "live_loads.csv"
 PARTITION_PSF = 15.0  # ASCE 7-16 4.3.2, where partitions may be moved and the live load is under 80 psf
@@ -17,7 +16,7 @@ PARTITION_PSF = 15.0  # ASCE 7-16 4.3.2, where partitions may be moved and the l
 
 @dataclass(frozen=True)
 class Use:
-    """A use of the table of minimum live loads.
+    """A use of the table of minimum live loads (ASCE 7-16 Table 4.3-1, IRC R301.5).
 
     uniform_psf             live load over the floor
     concentrated_lb         load on the patch instead of the uniform one; None where the table has none
@@ -60,35 +59,31 @@ def all_uses() -> tuple[Use, ...]:
     return tuple(found)
 
 
-# Short names people say for a row; everything else must match a row's own words.
+# Short names people say for one row alone. A word that two rows answer to (a shop on which floor, a dwelling's living
+# or its sleeping rooms) is not among them: as a present use the greater load would excuse what it must not.
 _SHORT = {
     "office": "offices",
     "living": "dwelling, living areas",
-    "dwelling": "dwelling, living areas",
-    "flat": "dwelling, living areas",
+    "living areas": "dwelling, living areas",
+    "living room": "dwelling, living areas",
     "bedroom": "dwelling, sleeping rooms",
     "bedrooms": "dwelling, sleeping rooms",
     "sleeping rooms": "dwelling, sleeping rooms",
     "attic storage": "attic with limited storage",
     "classroom": "classrooms",
     "deck": "dwelling deck",
-    "shop": "retail, first floor",
-    "retail": "retail, first floor",
     "restaurant": "dining rooms and restaurants",
     "restaurants": "dining rooms and restaurants",
+    "gymnasium": "gymnasiums",
     "garage": "passenger garage",
 }
-
-
-def _key(text: str) -> str:
-    return " ".join(re.findall(r"[a-z0-9]+", text.lower()))
 
 
 @functools.cache
 def _index() -> dict[str, Use]:
     by_name = {use.name: use for use in all_uses()}
-    index = {_key(name): use for name, use in by_name.items()}
-    index |= {_key(short): by_name[name] for short, name in _SHORT.items()}
+    index = {key(name): use for name, use in by_name.items()}
+    index |= {key(short): by_name[name] for short, name in _SHORT.items()}
     return index
 
 
@@ -102,14 +97,10 @@ def use_named(text: str) -> Use:
     >>> use_named("Offices").concentrated_lb, use_named("Offices").partition_psf
     (2000.0, 15.0)
     """
-    key = _key(text[:200])
-    found = _index().get(key)
+    found = _index().get(key(text[:200].replace("/", " ")))
     if found is not None:
         return found
-    near = difflib.get_close_matches(key, _index(), 3, 0.4)
-    names = list(dict.fromkeys(_index()[name].name for name in near))
-    names += [use.name for use in all_uses() if key and set(key.split()) <= set(_key(use.name).split())]
-    nearest = "; ".join(dict.fromkeys(names)) or "offices; dwelling, living areas; light storage"
+    nearest = "; ".join(offers(text, [use.name for use in all_uses()]) or ("offices", "dwelling, living areas"))
     raise ReadingError(
         "use", text, f"a use of the table, nearest: {nearest}; or its loads as live, concentrated, name", "is not known"
     )
