@@ -26,6 +26,8 @@ DEPTH_RULES = (
     (7.0, "ends held, both edges held along their length"),
     (float("inf"), "no rule covers it"),
 )
+# The record has no field for it, and bearing on the whole diameter would flatter the member.
+ROUND_SEAT = ("the width of a round member's flat seat: bearing is computed on the whole diameter",)
 BEARING_IN = 1.5  # taken where no bearing was measured
 WET_ABOVE_PERCENT = 19.0  # NDS Supplement: wet service above 19 % for an extended time
 
@@ -121,7 +123,7 @@ def resolve(member: Member) -> Scenario:
         hung_de_in=_hung(member),
         assumptions=(*wood.assumptions, *notes, *loads.assumptions, *condition.assumptions),
         cautions=(*wood.cautions, *condition.cautions, *_kind_cautions(member, wood.woods[0].timber)),
-        pending=(*condition.pending, *pending(member)),
+        pending=(*condition.pending, *pending(member), *(ROUND_SEAT if is_round else ())),
         new_work=any(defect.new_work for defect in member.condition or ()),
     )
 

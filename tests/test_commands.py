@@ -304,3 +304,13 @@ def test_a_foreign_package_in_the_way_is_named(tmp_path: Path) -> None:
     )
     assert done.returncode == exits.BAD_INPUT
     assert "'species'" in done.stderr
+
+
+def test_a_round_member_is_never_called_adequate_on_its_whole_diameter(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    path = session(tmp_path, put("J-1", size={"diameter": "9 in"}))
+    status, out, _ = run(capsys, "assess", path)
+    assert status == exits.NOT_ADEQUATE
+    assert "undetermined" in out
+    assert "flat seat" in out

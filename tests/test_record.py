@@ -72,7 +72,8 @@ def test_many_of_the_members_drawn_are_overstressed_and_many_are_not(drawn: list
     over = sum(finding.ratio is None or finding.ratio > 1.0 for finding in findings)
     assert len(findings) / 5 <= over <= len(findings) * 4 / 5
     assert sum(finding.verdict != "adequate" for finding in findings) >= len(findings) / 5
-    assert any(finding.verdict == "adequate" for finding in findings)
+    # With every field filled most hold something not yet assessed, so that few can be called adequate.
+    assert any(finding.verdict == "undetermined" and (finding.ratio or 9.0) <= 1.0 for finding in findings)
 
 
 @pytest.mark.parametrize(
