@@ -77,7 +77,7 @@ def finish(
     worst = ratio.argmax(axis=2)
     high = ratio.max(axis=2)
     # Where the load does nothing, room over nought is endless, or, overused already, minus endless; 0/0 says nothing.
-    with np.errstate(divide="ignore", invalid="ignore"):
+    with np.errstate(divide="ignore", invalid="ignore", over="ignore"):
         greatest = np.maximum(np.fmin.reduce(room / np.abs(per_unit), axis=2), 0.0)
     greatest[np.isnan(greatest)] = np.inf
     if none is not None:

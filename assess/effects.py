@@ -54,6 +54,10 @@ def effects(scenario: Scenario, rows: Rows, mesh: Mesh, stage: Stage, EI: Array,
         for number, point in enumerate(scenario.point_loads):
             case = mesh.lengths + number
             V_relieved[:, case] = V[:, case] * point_relief(mesh, rows, point.at_in) * relief.solid
+    elif scenario.point_loads:
+        # A load right over a support goes straight into it: between stations at one place there is no shear.
+        solid = mesh.x[:, 1:] > mesh.x[:, :-1]
+        V_relieved = V * np.concatenate([solid, solid], axis=1)[:, None, :]
     unit_effects = np.concatenate([statics.M[:, :few], V_relieved, statics.R[:, :few], statics.y[:, :few]], axis=2)
 
     lengths = unit_effects[:, : mesh.lengths]
